@@ -1,0 +1,77 @@
+#ifndef SLIPCASE_SOURCE_H
+#define SLIPCASE_SOURCE_H
+
+/*
+ * Where permutations come from: arguments, files, and generated families, read one after another
+ * in the order in which they were added, never more than one permutation in memory.
+ */
+
+#include "slipcase/hooks.h"
+#include "slipcase/perm.h"
+
+struct slip_source;
+
+/* One permutation and what is known of it. Owned by the caller, reused from call to call. */
+struct slip_item {
+    struct slip_perm perm;
+    struct slip_text name; /* empty when it has none */
+    const char *file;      /* the file it stands in ("-" for standard input), NULL if none; owned
+                              by the source */
+    uint64_t line;         /* in that file, from 1; 0 if none */
+    bool is_class;         /* it stands for its whole class under the eight symmetries */
+};
+
+SLIP_API void slip_item_init(struct slip_item *item);
+SLIP_API void slip_item_clear(struct slip_item *item); /* idempotent */
+
+SLIP_API slip_status slip_source_new(struct slip_source **source, struct slip_error *err);
+SLIP_API void slip_source_free(struct slip_source *source); /* NULL is allowed */
+
+/* Adds one permutation given as text; SLIP_DATA with the column when it is not one. */
+SLIP_API slip_status slip_source_add_text(struct slip_source *source, const char *text,
+                                          struct slip_error *err);
+/* Adds a file by its path, "-" for standard input (at most once: SLIP_USAGE). Not opened yet.
+ * Format: one permutation a line, '#' begins a comment, blank lines are skipped, CRLF and a UTF-8
+ * byte order mark are accepted, "name: permutation" names it. */
+SLIP_API slip_status slip_source_add_file(struct slip_source *source, const char *path,
+                                          struct slip_error *err);
+/* Adds all permutations of length from..to in lexicographic order. */
+SLIP_API slip_status slip_source_add_all(struct slip_source *source, uint32_t from, uint32_t to,
+                                         struct slip_error *err);
+/* Adds the least member of each class under the eight symmetries, lengths from..to. */
+SLIP_API slip_status slip_source_add_classes(struct slip_source *source, uint32_t from, uint32_t to,
+                                             struct slip_error *err);
+/* Adds `count` random permutations: each draws its length uniformly from from..to (no draw when
+ * from = to), then itself uniformly, from one slip_random with this seed. */
+SLIP_API slip_status slip_source_add_random(struct slip_source *source, uint64_t count,
+                                            uint32_t from, uint32_t to, uint64_t seed,
+                                            struct slip_error *err);
+
+/* The number of sources added. */
+SLIP_API size_t slip_source_count(const struct slip_source *source);
+
+/* Opens every file; SLIP_IO naming the first that cannot be read (a directory cannot). Called once,
+ * before the first slip_source_next. */
+SLIP_API slip_status slip_source_open(struct slip_source *source, struct slip_error *err);
+
+/*
+ * Whether any permutation in the files has a name. Looks ahead through the files; what cannot be
+ * rewound (a pipe) is copied to an unnamed temporary file first. After slip_source_open, before
+ * slip_source_next. SLIP_IO when reading or copying fails.
+ */
+SLIP_API slip_status slip_source_has_names(struct slip_source *source, bool *names,
+                                           struct slip_error *err);
+
+/* How many permutations there are in all, when that is known without reading files; else 0. */
+SLIP_API double slip_source_total(const struct slip_source *source);
+
+/*
+ * The next permutation: *more is false at the end. SLIP_DATA for a bad line (err has file, line
+ * and column); the next call then goes on with the line after it. A file without a permutation,
+ * when its end is reached, is SLIP_DATA too ("no permutations in FILE"). SLIP_IO for a read error,
+ * SLIP_LIMIT without memory: after these there is no going on.
+ */
+SLIP_API slip_status slip_source_next(struct slip_source *source, struct slip_item *item,
+                                      bool *more, struct slip_error *err);
+
+#endif
