@@ -14,6 +14,7 @@ enum slip_cell {
     SLIP_CELL_TEXT,   /* left-aligned; a JSON string */
     SLIP_CELL_NUMBER, /* right-aligned, thousands grouped in the table; a JSON number */
     SLIP_CELL_BIG,    /* the same, but a JSON string, since it may not fit 53 bits */
+    SLIP_CELL_RAW,    /* as TEXT, but in JSON the cell is JSON text already */
 };
 
 struct slip_column {
