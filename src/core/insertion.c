@@ -3,6 +3,8 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "core/chars.h"
+
 slip_status slip_insertion_apply(struct slip_perm *q, const struct slip_perm *p,
                                  struct slip_insertion insertion, struct slip_error *err)
 {
@@ -45,7 +47,7 @@ static slip_status read_count(uint32_t *number, const char *text, size_t length,
 {
     size_t start = *at;
     uint64_t value = 0;
-    while (*at < length && text[*at] >= '0' && text[*at] <= '9' && value <= UINT32_MAX)
+    while (*at < length && slip_is_digit(text[*at]) && value <= UINT32_MAX)
         value = 10 * value + (uint64_t)(text[(*at)++] - '0');
     if (*at == start || value == 0 || value > UINT32_MAX)
         return slip_fail_at(err, SLIP_DATA, start + 1, *at > start ? (uint32_t)(*at - start) : 1,

@@ -1,45 +1,54 @@
 /* Reading one permutation from text: the grammar is in the README. */
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 
+#include "core/chars.h"
 #include "slipcase/perm.h"
 
-/* The text between `from` and `to` (offsets), and where each element was found. */
+/* The text between `from` and `to` (offsets), and the elements found in it. */
 struct reader {
     const char *text;
     size_t from, to;
+    bool separated; /* elements are numbers apart, not single digits */
     uint32_t *values;
-    uint64_t *offsets;
-    size_t count, capacity;
+    uint32_t count, capacity;
     struct slip_error *err;
 };
 
-static bool is_blank(char c)
-{
-    return c == ' ' || c == '\t' || c == '\r' || c == '\n' || c == '\v' || c == '\f';
-}
-
-static bool is_digit(char c)
-{
-    return c >= '0' && c <= '9';
-}
-
 static void trim(struct reader *r)
 {
-    while (r->from < r->to && is_blank(r->text[r->from]))
+    while (r->from < r->to && slip_is_blank(r->text[r->from]))
         r->from++;
-    while (r->to > r->from && is_blank(r->text[r->to - 1]))
+    while (r->to > r->from && slip_is_blank(r->text[r->to - 1]))
         r->to--;
 }
 
-/* The bytes of the UTF-8 character at offset i (1 for anything that is not one). */
+/* The bytes of the UTF-8 character at offset i, 1 for anything that is not one. */
 static uint32_t character(const struct reader *r, size_t i)
 {
-    uint32_t span = 1;
-    if ((unsigned char)r->text[i] >= 0xC0)
-        while (i + span < r->to && span < 4 && ((unsigned char)r->text[i + span] & 0xC0) == 0x80)
-            span++;
+    const unsigned char *at = (const unsigned char *)r->text + i;
+    uint32_t span = *at >= 0xF0 ? 4 : *at >= 0xE0 ? 3 : *at >= 0xC2 ? 2 : 1;
+    if (*at > 0xF4 || span > r->to - i)
+        return 1;
+    for (uint32_t k = 1; k < span; k++)
+        if ((at[k] & 0xC0) != 0x80)
+            return 1;
     return span;
+}
+
+/* The character at offset i as a message shows it: in quotes, or as a byte when it cannot be
+ * shown (control characters, invalid UTF-8). */
+static void show(char shown[16], const struct reader *r, size_t i)
+{
+    uint32_t span = character(r, i);
+    unsigned char first = (unsigned char)r->text[i];
+    bool printable = span == 1 ? first >= ' ' && first < 0x7F
+                               : first != 0xC2 || (unsigned char)r->text[i + 1] >= 0xA0;
+    if (printable)
+        snprintf(shown, 16, "'%.*s'", (int)span, r->text + i);
+    else
+        snprintf(shown, 16, "byte 0x%02X", first);
 }
 
 static slip_status strip_brackets(struct reader *r)
@@ -61,23 +70,19 @@ static slip_status strip_brackets(struct reader *r)
     return SLIP_OK;
 }
 
-static slip_status push(struct reader *r, uint32_t value, size_t offset)
+static slip_status push(struct reader *r, uint32_t value)
 {
-    if (r->count == UINT32_MAX)
-        return slip_fail(r->err, SLIP_LIMIT, "more than %u elements", UINT32_MAX);
     if (r->count == r->capacity) {
-        size_t capacity = r->capacity ? 2 * r->capacity : 16;
-        uint32_t *values = realloc(r->values, capacity * sizeof *values);
-        if (values)
-            r->values = values;
-        uint64_t *offsets = values ? realloc(r->offsets, capacity * sizeof *offsets) : NULL;
-        if (!offsets)
-            return slip_fail_memory(r->err, capacity * (sizeof *values + sizeof *offsets));
-        r->offsets = offsets;
+        if (r->capacity > UINT32_MAX / 2)
+            return slip_fail(r->err, SLIP_LIMIT, "more than %u elements", r->count);
+        uint32_t capacity = r->capacity ? 2 * r->capacity : 16;
+        uint32_t *values = realloc(r->values, (size_t)capacity * sizeof *values);
+        if (!values)
+            return slip_fail_memory(r->err, (uint64_t)capacity * sizeof *values);
+        r->values = values;
         r->capacity = capacity;
     }
-    r->values[r->count] = value;
-    r->offsets[r->count++] = offset;
+    r->values[r->count++] = value;
     return SLIP_OK;
 }
 
@@ -85,16 +90,18 @@ static slip_status read_number(struct reader *r, size_t *at)
 {
     size_t start = *at;
     uint64_t value = 0;
-    while (*at < r->to && is_digit(r->text[*at])) {
+    while (*at < r->to && slip_is_digit(r->text[*at])) {
         if (value <= UINT32_MAX)
             value = 10 * value + (uint64_t)(r->text[*at] - '0');
         (*at)++;
     }
     size_t digits = *at - start;
-    if (digits == 0)
+    if (digits == 0) {
+        char shown[16];
+        show(shown, r, start);
         return slip_fail_at(r->err, SLIP_DATA, start + 1, character(r, start),
-                            "'%.*s' is not a number, expected an element (1, 2, 3, ...)",
-                            (int)character(r, start), r->text + start);
+                            "%s is not a number, expected an element (1, 2, 3, ...)", shown);
+    }
     uint32_t span = digits > UINT32_MAX ? UINT32_MAX : (uint32_t)digits;
     if (value > UINT32_MAX)
         return slip_fail_at(r->err, SLIP_DATA, start + 1, span,
@@ -102,7 +109,7 @@ static slip_status read_number(struct reader *r, size_t *at)
     if (value == 0)
         return slip_fail_at(r->err, SLIP_DATA, start + 1, span,
                             "0 is not an element, elements count from 1");
-    return push(r, (uint32_t)value, start);
+    return push(r, (uint32_t)value);
 }
 
 /* Elements separated by blanks, or by commas with blanks around them. */
@@ -114,18 +121,19 @@ static slip_status read_separated(struct reader *r)
         if (status != SLIP_OK)
             return status;
         size_t after = at;
-        while (at < r->to && is_blank(r->text[at]))
+        while (at < r->to && slip_is_blank(r->text[at]))
             at++;
         if (at < r->to && r->text[at] == ',') {
             at++;
-            while (at < r->to && is_blank(r->text[at]))
+            while (at < r->to && slip_is_blank(r->text[at]))
                 at++;
             if (at == r->to)
                 return slip_fail_at(r->err, SLIP_DATA, at + 1, 1, "expected an element after ','");
         } else if (at < r->to && at == after) {
+            char shown[16];
+            show(shown, r, at);
             return slip_fail_at(r->err, SLIP_DATA, at + 1, character(r, at),
-                                "'%.*s' is not part of a number, expected a blank or a comma",
-                                (int)character(r, at), r->text + at);
+                                "%s is not part of a number, expected a blank or a comma", shown);
         }
     }
     return SLIP_OK;
@@ -134,7 +142,7 @@ static slip_status read_separated(struct reader *r)
 static bool all_digits(const struct reader *r)
 {
     for (size_t i = r->from; i < r->to; i++)
-        if (!is_digit(r->text[i]))
+        if (!slip_is_digit(r->text[i]))
             return false;
     return true;
 }
@@ -152,48 +160,62 @@ static slip_status read_digits(struct reader *r)
         if (r->text[i] == '0')
             return slip_fail_at(r->err, SLIP_DATA, i + 1, 1,
                                 "0 is not an element, elements count from 1");
-        slip_status status = push(r, (uint32_t)(r->text[i] - '0'), i);
+        slip_status status = push(r, (uint32_t)(r->text[i] - '0'));
         if (status != SLIP_OK)
             return status;
     }
     return SLIP_OK;
 }
 
-static uint32_t digits_of(uint32_t value)
+/* Where element `index` stands in the text, which has been read without an error, so that elements
+ * are the runs of digits (or the digits); *span is its length. */
+static size_t find_element(const struct reader *r, uint32_t index, uint32_t *span)
 {
-    uint32_t digits = 1;
-    while (value /= 10)
-        digits++;
-    return digits;
+    *span = 1;
+    if (!r->separated)
+        return r->from + index;
+    size_t start = r->from, end = r->from;
+    for (uint32_t i = 0; i <= index; i++) {
+        for (start = end; !slip_is_digit(r->text[start]); start++)
+            ;
+        for (end = start; end < r->to && slip_is_digit(r->text[end]); end++)
+            ;
+    }
+    *span = (uint32_t)(end - start);
+    return start;
 }
 
 /* 1..n each once; says which element is missing when one is too large or repeated. */
 static slip_status check_elements(struct reader *r)
 {
-    uint32_t n = (uint32_t)r->count;
+    uint32_t n = r->count;
     uint32_t *place = calloc((size_t)n + 1, sizeof *place); /* 1 + index of each value */
     if (!place)
         return slip_fail_memory(r->err, ((uint64_t)n + 1) * sizeof *place);
-    size_t bad = n;
-    for (uint32_t i = 0; i < n; i++) {
+    uint32_t bad = n; /* the first element that is too large or repeated */
+    for (uint32_t i = 0; i < n && bad == n; i++) {
         uint32_t v = r->values[i];
-        if (v <= n && !place[v])
-            place[v] = i + 1;
-        else if (bad == n)
+        if (v > n || place[v])
             bad = i;
+        else
+            place[v] = i + 1;
     }
     slip_status status = SLIP_OK;
     if (bad < n) {
-        uint32_t v = r->values[bad], missing = 1;
-        while (missing <= n && place[missing])
+        for (uint32_t i = bad + 1; i < n; i++) /* what stands after it is not missing */
+            if (r->values[i] <= n && !place[r->values[i]])
+                place[r->values[i]] = i + 1;
+        uint32_t v = r->values[bad], missing = 1, span;
+        while (place[missing])
             missing++;
+        size_t at = find_element(r, bad, &span);
         if (v > n)
-            status = slip_fail_at(r->err, SLIP_DATA, r->offsets[bad] + 1, digits_of(v),
+            status = slip_fail_at(r->err, SLIP_DATA, at + 1, span,
                                   "%u is too large for %u element%s: %u is missing", v, n,
                                   n == 1 ? "" : "s", missing);
         else
             status =
-                slip_fail_at(r->err, SLIP_DATA, r->offsets[bad] + 1, digits_of(v),
+                slip_fail_at(r->err, SLIP_DATA, at + 1, span,
                              "%u is repeated (it stands at position %u already): %u is missing", v,
                              place[v], missing);
     }
@@ -206,15 +228,16 @@ slip_status slip_perm_parse(struct slip_perm *p, const char *text, size_t length
 {
     struct reader r = {.text = text, .from = 0, .to = length, .err = err};
     slip_status status = strip_brackets(&r);
+    r.separated = r.to - r.from < 2 || !all_digits(&r);
     if (status == SLIP_OK)
-        status = r.to - r.from > 1 && all_digits(&r) ? read_digits(&r) : read_separated(&r);
+        status = r.separated ? read_separated(&r) : read_digits(&r);
     if (status == SLIP_OK)
         status = check_elements(&r);
-    if (status == SLIP_OK)
-        status = slip_perm_resize(p, (uint32_t)r.count, err);
-    if (status == SLIP_OK && r.count)
-        memcpy(p->at, r.values, r.count * sizeof *r.values);
-    free(r.values);
-    free(r.offsets);
-    return status;
+    if (status != SLIP_OK) {
+        free(r.values);
+        return status;
+    }
+    free(p->at); /* the elements change hands: a long permutation is never held twice */
+    *p = (struct slip_perm){.at = r.values, .n = r.count, .capacity = r.capacity};
+    return SLIP_OK;
 }
