@@ -32,7 +32,8 @@ SLIP_API slip_status slip_source_add_text(struct slip_source *source, const char
                                           struct slip_error *err);
 /* Adds a file by its path, "-" for standard input (at most once: SLIP_USAGE). Not opened yet.
  * Format: one permutation a line, '#' begins a comment, blank lines are skipped, CRLF and a UTF-8
- * byte order mark are accepted, "name: permutation" names it. */
+ * byte order mark are accepted, "name: permutation" names it (no ':' and no control characters in
+ * the name). Columns in errors count bytes of the line as it stands in the file. */
 SLIP_API slip_status slip_source_add_file(struct slip_source *source, const char *path,
                                           struct slip_error *err);
 /* Adds all permutations of length from..to in lexicographic order. */
@@ -67,9 +68,10 @@ SLIP_API double slip_source_total(const struct slip_source *source);
 
 /*
  * The next permutation: *more is false at the end. SLIP_DATA for a bad line (err has file, line
- * and column); the next call then goes on with the line after it. A file without a permutation,
- * when its end is reached, is SLIP_DATA too ("no permutations in FILE"). SLIP_IO for a read error,
- * SLIP_LIMIT without memory: after these there is no going on.
+ * and column); the next call then goes on with the line after it. A file of blank lines and
+ * comments only, when its end is reached, is SLIP_DATA too (err has the file, no line). SLIP_IO for
+ * a read error, SLIP_INTERRUPTED when a signal broke off the reading, SLIP_LIMIT without memory or
+ * for a line over 1 GiB: after these there is no going on.
  */
 SLIP_API slip_status slip_source_next(struct slip_source *source, struct slip_item *item,
                                       bool *more, struct slip_error *err);
