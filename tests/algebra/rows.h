@@ -1,0 +1,34 @@
+#ifndef TESTS_ALGEBRA_ROWS_H
+#define TESTS_ALGEBRA_ROWS_H
+
+/* Random integer matrices for the tests of this folder, many of them singular on purpose. */
+
+#include "slipcase/algebra.h"
+#include "slipcase/random.h"
+
+static inline long small(struct slip_random *random, long most)
+{
+    return (long)slip_random_below(random, (uint64_t)(2 * most + 1)) - most;
+}
+
+/* a random matrix; about every second column is made a combination of two others. */
+static inline void random_matrix(struct slip_matrix *a, size_t rows, size_t columns, long most,
+                                 struct slip_random *random)
+{
+    assert_int_equal(slip_matrix_shape(a, rows, columns, NULL), SLIP_OK);
+    for (size_t i = 0; i < rows * columns; i++)
+        mpz_set_si(a->at[i], small(random, most));
+    for (size_t j = 0; j < columns; j++) {
+        if (slip_random_below(random, 2))
+            continue;
+        size_t u = slip_random_below(random, columns), v = slip_random_below(random, columns);
+        long s = small(random, 3), t = small(random, 3);
+        for (size_t i = 0; i < rows; i++) {
+            long sum =
+                s * mpz_get_si(slip_matrix_at(a, i, u)) + t * mpz_get_si(slip_matrix_at(a, i, v));
+            mpz_set_si(slip_matrix_at(a, i, j), sum);
+        }
+    }
+}
+
+#endif
