@@ -28,6 +28,7 @@ struct slip_engine {
     const char *name;    /* as on the command line */
     const char *status;  /* how far its figures are established: "proved" */
     const char *summary; /* one line for --help */
+    uint32_t longest;    /* the largest n + r it takes; 0: no such limit */
 
     /* Whether the engine takes this job: SLIP_OK, or SLIP_LIMIT with what is too large (size, or
      * memory by an estimate made before the work). */

@@ -63,6 +63,6 @@ slip_status slip_source_add_all(struct slip_source *source, uint32_t from, uint3
         return SLIP_LIMIT;
     slip_perm_init(&part->perm);
     part->length = part->from = from;
-    part->to = to;
+    part->to = part->part.longest = to;
     return slip_source_push(source, &part->part, err);
 }

@@ -101,6 +101,6 @@ slip_status slip_source_add_classes(struct slip_source *source, uint32_t from, u
         return SLIP_LIMIT;
     slip_perm_init(&part->perm);
     part->length = part->from = from;
-    part->to = to;
+    part->to = part->part.longest = to;
     return slip_source_push(source, &part->part, err);
 }

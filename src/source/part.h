@@ -27,6 +27,7 @@ struct slip_part_kind {
 
 struct slip_part {
     const struct slip_part_kind *kind;
+    uint32_t longest; /* length of its longest permutation where that is known when it is added */
 };
 
 struct slip_source {

@@ -54,6 +54,6 @@ slip_status slip_source_add_random(struct slip_source *source, uint64_t count, u
     part->random.state = seed;
     part->count = count;
     part->from = from;
-    part->to = to;
+    part->to = part->part.longest = to;
     return slip_source_push(source, &part->part, err);
 }

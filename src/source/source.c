@@ -109,6 +109,15 @@ slip_status slip_source_has_names(struct slip_source *source, bool *names, struc
     return SLIP_OK;
 }
 
+uint32_t slip_source_longest(const struct slip_source *source)
+{
+    uint32_t longest = 0;
+    for (size_t i = 0; i < source->count; i++)
+        if (source->parts[i]->longest > longest)
+            longest = source->parts[i]->longest;
+    return longest;
+}
+
 double slip_source_total(const struct slip_source *source)
 {
     double total = 0;

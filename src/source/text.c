@@ -49,5 +49,6 @@ slip_status slip_source_add_text(struct slip_source *source, const char *text,
         text_free(&part->part);
         return status;
     }
+    part->part.longest = part->perm.n;
     return slip_source_push(source, &part->part, err);
 }

@@ -53,7 +53,7 @@ static void writes_tables(void **state)
     (void)state;
     expect(SLIP_TABLE, rows, 2,
            "permutation  n   distinct  name\n"
-           "-----------  -  ---------  --------\n"
+           "-----------  -  ---------  ------\n"
            "1 3 2        3  1,234,567  a, \"b\"\n"
            "()           0       -100\n");
     expect(SLIP_TABLE, rows, 0, "");

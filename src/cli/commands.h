@@ -1,0 +1,12 @@
+#ifndef CLI_COMMANDS_H
+#define CLI_COMMANDS_H
+
+#include "cli/options.h"
+
+extern const struct command command_count;
+extern const struct command command_list;
+extern const struct command command_insert;
+extern const struct command command_delete;
+extern const struct command command_contains;
+
+#endif

@@ -1,0 +1,229 @@
+/* slipcase count: how many different permutations come out. */
+#include <stdlib.h>
+#include <string.h>
+
+#include "cli/batch.h"
+#include "cli/columns.h"
+#include "cli/commands.h"
+#include "cli/counting.h"
+#include "cli/message.h"
+#include "cli/sources.h"
+#include "cli/summary.h"
+#include "slipcase/symmetry.h"
+
+static const struct option options[] = {
+    {"--columns", "LIST", false,
+     "the columns to print, in this order, separated by commas; besides the\n"
+     "usual ones also: name, avoiders"},
+    {"--summary", NULL, false,
+     "instead of rows, for each n and r: how many permutations, the least,\n"
+     "greatest and mean count, how often each count occurs, an example of\n"
+     "each extreme; classes weigh as much as they have members"},
+    {"--check", NULL, false,
+     "check every row: the multiplicities of the results against the number\n"
+     "of placements, and small rows against trying all permutations"},
+};
+static const struct option_group own = {"What is shown", options, sizeof options / sizeof *options};
+static const struct option_group *const groups[] = {&sources_options, &counting_options, &own,
+                                                    &work_options,    &output_options,   NULL};
+
+enum { CHUNK = 256 }; /* permutations that are counted together */
+
+struct counting {
+    struct batch *batch;
+    const struct slip_engine *engine; /* NULL: chosen for each row */
+    struct range r;
+    struct columns columns;
+    struct slip_summary summary;
+    bool check, summarise;
+    struct slip_item items[CHUNK];
+    size_t held;
+    const struct slip_item *showing; /* the item of the row that is being shown */
+    struct slip_text cells[COLUMNS_MOST];
+};
+
+/* Whose row it was goes before the message. */
+static slip_status name_row(slip_status status, const struct slip_row *row, struct slip_error *err)
+{
+    if (status == SLIP_OK || status == SLIP_INTERRUPTED || !err || !err->message[0])
+        return status;
+    struct slip_text perm;
+    slip_text_init(&perm);
+    slip_perm_write(&perm, row->perm);
+    char message[sizeof err->message];
+    memcpy(message, err->message, sizeof message);
+    size_t shown = perm.length; /* a long one is cut between elements */
+    while (shown > 60 || (shown < perm.length && perm.data[shown] != ' '))
+        shown--;
+    slip_fail(err, status, "%.*s%s with r = %u: %.400s", (int)shown, slip_text_get(&perm),
+              shown < perm.length ? " ..." : "", row->r, message);
+    slip_text_clear(&perm);
+    return status;
+}
+
+static slip_status show(struct counting *counting, struct slip_row *row, const char *name,
+                        struct slip_error *err)
+{
+    const char *cells[COLUMNS_MOST];
+    for (size_t c = 0; c < counting->columns.count; c++) {
+        const struct count_column *column = counting->columns.column[c];
+        slip_text_reset(&counting->cells[c]);
+        slip_status status = column->write(&counting->cells[c], row, name, err);
+        if (status != SLIP_OK)
+            return status;
+        cells[c] = slip_text_get(&counting->cells[c]);
+    }
+    return batch_row(counting->batch, cells, err);
+}
+
+static slip_status summarise(struct counting *counting, const struct slip_item *item,
+                             struct slip_row *row, struct slip_error *err)
+{
+    unsigned weight = 1;
+    slip_status status = SLIP_OK;
+    if (item->is_class)
+        status = slip_symmetry_orbit(&weight, row->perm, err);
+    if (status == SLIP_OK)
+        status =
+            slip_summary_add(&counting->summary, row->perm, row->r, row->distinct, weight, err);
+    return status;
+}
+
+/* A counted row, in order. */
+static slip_status row_done(void *context, struct slip_row *row, struct slip_error *err)
+{
+    struct counting *counting = context;
+    const struct slip_item *item = counting->showing;
+    while (&item->perm != row->perm)
+        item++;
+    counting->showing = item;
+    slip_status status = SLIP_OK;
+    if (counting->check)
+        status =
+            slip_check_row(row->distinct, row->perm, row->r, &counting->batch->work.hooks, err);
+    if (status == SLIP_OK && counting->summarise)
+        status = summarise(counting, item, row, err);
+    else if (status == SLIP_OK)
+        status = show(counting, row, slip_text_get(&item->name), err);
+    if (status == SLIP_OK) {
+        counting->batch->work.rows++;
+        counting->batch->work.results += mpz_get_d(row->distinct);
+        work_label(&counting->batch->work, row->perm, row->r);
+    }
+    return status;
+}
+
+/* Counts the permutations held, each with every r. */
+static slip_status count_held(struct counting *counting, struct slip_error *err)
+{
+    size_t each = (size_t)counting->r.to - counting->r.from + 1, count = counting->held * each;
+    if (count == 0)
+        return SLIP_OK;
+    struct slip_row *rows = malloc(count * sizeof *rows);
+    if (!rows)
+        return slip_fail_memory(err, count * sizeof *rows);
+    for (size_t i = 0; i < count; i++)
+        slip_row_init(&rows[i], &counting->items[i / each].perm,
+                      counting->r.from + (uint32_t)(i % each));
+    counting->showing = counting->items;
+    work_label(&counting->batch->work, rows[0].perm, rows[0].r);
+    size_t failed = count;
+    slip_status status = slip_rows_count(rows, count, counting->engine, row_done, counting,
+                                         &counting->batch->work.hooks, &failed, err);
+    if (status != SLIP_OK && failed < count)
+        name_row(status, &rows[failed], err);
+    for (size_t i = 0; i < count; i++)
+        slip_row_clear(&rows[i]);
+    free(rows);
+    counting->held = 0;
+    return status;
+}
+
+static slip_status hold(void *context, const struct slip_item *item, struct slip_error *err)
+{
+    struct counting *counting = context;
+    if (!item)
+        return count_held(counting, err);
+    struct slip_item *place = &counting->items[counting->held];
+    slip_status status = slip_perm_copy(&place->perm, &item->perm, err);
+    if (status != SLIP_OK)
+        return status;
+    slip_text_reset(&place->name);
+    slip_text_string(&place->name, slip_text_get(&item->name));
+    place->is_class = item->is_class;
+    counting->held++;
+    if (counting->held == CHUNK || (uint64_t)item->perm.n > 1000000)
+        return count_held(counting, err);
+    return slip_text_ok(&place->name, err);
+}
+
+static int begin(struct counting *counting, const struct call *call)
+{
+    int code = counting_range(call, &counting->r);
+    if (!code)
+        code = counting_engine(call, &counting->engine);
+    if (!code)
+        code = columns_choose(&counting->columns, call, false);
+    if (!code && counting->summarise && call_flag(call, "--columns"))
+        code = misuse_missing(call, "--summary has columns of its own: leave out --columns");
+    bool names = !counting->summarise && !call_flag(call, "--columns");
+    if (!code)
+        code = batch_begin(counting->batch, call, 0, names);
+    if (!code)
+        code = counting_fits(call, counting->engine, counting->batch->source, counting->r.to);
+    if (!code)
+        code = columns_choose(&counting->columns, call, counting->batch->names);
+    if (code || counting->summarise)
+        return code;
+    struct slip_column columns[COLUMNS_MOST];
+    for (size_t c = 0; c < counting->columns.count; c++)
+        columns[c] = (struct slip_column){counting->columns.column[c]->name,
+                                          counting->columns.column[c]->cell};
+    return batch_columns(counting->batch, columns, counting->columns.count);
+}
+
+static int run(struct call *call)
+{
+    struct batch batch = {.call = call};
+    struct counting *counting = calloc(1, sizeof *counting);
+    if (!counting)
+        return complain_memory();
+    counting->batch = &batch;
+    counting->check = call_flag(call, "--check");
+    counting->summarise = call_flag(call, "--summary");
+    slip_summary_init(&counting->summary);
+    int code = begin(counting, call);
+    batch.work.total *= (double)counting->r.to - counting->r.from + 1;
+    if (!code)
+        code = batch_run(&batch, hold, counting);
+    if (counting->summarise && (code == 0 || code == SLIP_DATA || code == SLIP_INTERRUPTED)) {
+        int shown = summary_show(&batch, &counting->summary);
+        code = shown ? shown : code;
+    }
+    code = batch_end(&batch, code);
+    slip_summary_clear(&counting->summary);
+    for (size_t i = 0; i < CHUNK; i++)
+        slip_item_clear(&counting->items[i]);
+    for (size_t c = 0; c < COLUMNS_MOST; c++)
+        slip_text_clear(&counting->cells[c]);
+    free(counting);
+    return code;
+}
+
+const struct command command_count = {
+    .name = "count",
+    .summary = "Count the different permutations that r insertions give.",
+    .usage = "[-r R|A..B] [permutations and options]",
+    .examples = "slipcase count -r 1..3 '1 3 2'\n"
+                "slipcase count -r 2 --classes 6 --format csv\n"
+                "slipcase count -r 3 --file shelf.txt --columns name,distinct\n"
+                "slipcase count -r 2 --classes 5 --summary\n",
+    .details = "Columns: permutation, n (its length), r, distinct (different results),\n"
+               "placements (results with the inserted points marked), sequences (insertion\n"
+               "sequences), orbit (size of its class under the eight symmetries of the square),\n"
+               "engine (what counted), name (when the input has any); and on request avoiders\n"
+               "(permutations of length n + r that do not contain it).\n"
+               "In JSON distinct, placements, sequences and avoiders are strings.\n",
+    .groups = groups,
+    .run = run,
+};

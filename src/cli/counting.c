@@ -1,0 +1,68 @@
+#include "cli/counting.h"
+
+#include <string.h>
+
+#include "cli/message.h"
+
+static const struct option options[] = {
+    {"-r", "R|A..B", false, "how many elements are inserted (default: 1)"},
+    {"--engine", "NAME", false,
+     "auto (default: the fastest one whose result is proved) or the name of one:\n"
+     "store, level by level through the hashed permutation store"},
+};
+
+const struct option_group counting_options = {"Counting", options,
+                                              sizeof options / sizeof *options};
+
+int counting_range(const struct call *call, struct range *r)
+{
+    const struct token *token = call_option(call, "-r");
+    *r = (struct range){1, 1};
+    return token ? value_range(call, token, r) : 0;
+}
+
+int counting_single(const struct call *call, uint32_t *r)
+{
+    const struct token *token = call_option(call, "-r");
+    uint64_t number = 1;
+    int code = token ? value_number(call, token, 0, UINT32_MAX, &number) : 0;
+    *r = (uint32_t)number;
+    return code;
+}
+
+int counting_engine(const struct call *call, const struct slip_engine **engine)
+{
+    const struct token *token = call_option(call, "--engine");
+    *engine = NULL;
+    if (!token)
+        return 0;
+    const char *words[16] = {"auto"};
+    size_t count, chosen;
+    const struct slip_engine *const *list = slip_engine_list(&count);
+    for (size_t i = 0; i < count && i < 15; i++)
+        words[i + 1] = list[i]->name;
+    int code = value_word(call, token, words, count + 1, &chosen);
+    if (!code && chosen)
+        *engine = list[chosen - 1];
+    return code;
+}
+
+int counting_fits(const struct call *call, const struct slip_engine *engine,
+                  const struct slip_source *source, uint32_t r)
+{
+    uint64_t length = (uint64_t)slip_source_longest(source) + r;
+    uint32_t most = engine ? engine->longest : 0;
+    size_t count;
+    const struct slip_engine *const *list = slip_engine_list(&count);
+    bool unlimited = engine && !engine->longest;
+    for (size_t i = 0; !engine && i < count; i++) {
+        unlimited = unlimited || !list[i]->longest;
+        most = list[i]->longest > most ? list[i]->longest : most;
+    }
+    if (unlimited || length <= most)
+        return 0;
+    complain(call, "n + r reaches %llu (n up to %u, r up to %u), and %s at most %u",
+             (unsigned long long)length, slip_source_longest(source), r,
+             engine ? "this engine takes" : "the engines take", most);
+    return SLIP_LIMIT;
+}

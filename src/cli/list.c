@@ -1,0 +1,193 @@
+/* slipcase list: which permutations come out, and in how many ways each. */
+#include <stdlib.h>
+#include <string.h>
+
+#include "cli/batch.h"
+#include "cli/commands.h"
+#include "cli/counting.h"
+#include "cli/marked.h"
+#include "cli/message.h"
+#include "cli/sources.h"
+#include "slipcase/embedding.h"
+#include "slipcase/insertion.h"
+#include "slipcase/rows.h"
+
+static const struct option options[] = {
+    {"--witness", NULL, false,
+     "add one insertion sequence for each result, as value@slot value@slot ...;\n"
+     "the table also puts the inserted elements in brackets"},
+    {"--limit", "K", false, "only the first K results of each permutation"},
+};
+static const struct option_group own = {"What is shown", options, sizeof options / sizeof *options};
+static const struct option_group *const groups[] = {&sources_options, &counting_options, &own,
+                                                    &work_options,    &output_options,   NULL};
+
+enum { PERMUTATION, R, RESULT, MULTIPLICITY, MOST = MULTIPLICITY + 3 };
+
+struct listing {
+    struct batch *batch;
+    const struct slip_engine *engine;
+    uint32_t r;
+    bool witness;
+    uint64_t limit;
+    struct slip_perm result;
+    struct slip_text permutation, number, text, multiplicity, sequence;
+};
+
+/* The complement of the first embedding of p in the result: positions[0..r-1], ascending. */
+static slip_status complement(uint32_t *positions, const struct slip_perm *p,
+                              const struct slip_perm *result, struct slip_error *err)
+{
+    uint32_t *chosen = malloc(((size_t)p->n + 1) * sizeof *chosen);
+    if (!chosen)
+        return slip_fail_memory(err, ((uint64_t)p->n + 1) * sizeof *chosen);
+    bool found;
+    slip_status status = slip_embedding_first(&found, chosen, p, result, NULL, err);
+    for (uint32_t i = 0, next = 0, out = 0; status == SLIP_OK && i < result->n; i++) {
+        if (next < p->n && chosen[next] == i)
+            next++;
+        else
+            positions[out++] = i;
+    }
+    free(chosen);
+    return status;
+}
+
+/* The insertion sequence, and in a table the result with its inserted elements marked. */
+static slip_status write_witness(struct listing *listing, const struct slip_perm *p,
+                                 struct slip_error *err)
+{
+    uint32_t r = listing->r;
+    uint32_t *positions = malloc(((size_t)r + 1) * sizeof *positions);
+    struct slip_insertion *sequence = malloc(((size_t)r + 1) * sizeof *sequence);
+    slip_status status = SLIP_OK;
+    if (!positions || !sequence)
+        status = slip_fail_memory(err, ((uint64_t)r + 1) * sizeof *sequence);
+    if (status == SLIP_OK)
+        status = complement(positions, p, &listing->result, err);
+    if (status == SLIP_OK)
+        status = slip_insertion_sequence(sequence, &listing->result, positions, r, err);
+    if (status == SLIP_OK) {
+        slip_insertion_write(&listing->sequence, sequence, r);
+        if (listing->batch->format == SLIP_TABLE) {
+            slip_text_reset(&listing->text);
+            marked_write(&listing->text, &listing->result, positions, r);
+        }
+    }
+    free(positions);
+    free(sequence);
+    return status;
+}
+
+static slip_status show(struct listing *listing, const struct slip_item *item,
+                        const struct slip_results *results, uint64_t i, struct slip_error *err)
+{
+    slip_status status =
+        slip_packed_to(&listing->result, results->keys + i * results->words, results->length, err);
+    slip_text_reset(&listing->text);
+    slip_text_reset(&listing->multiplicity);
+    slip_text_reset(&listing->sequence);
+    slip_perm_write(&listing->text, &listing->result);
+    slip_text_number(&listing->multiplicity, results->multiplicities[i]);
+    if (status == SLIP_OK && listing->witness)
+        status = write_witness(listing, &item->perm, err);
+    if (status != SLIP_OK)
+        return status;
+    const char *cells[MOST] = {slip_text_get(&listing->permutation),
+                               slip_text_get(&listing->number), slip_text_get(&listing->text),
+                               slip_text_get(&listing->multiplicity)};
+    size_t count = MULTIPLICITY + 1;
+    if (listing->witness)
+        cells[count++] = slip_text_get(&listing->sequence);
+    cells[count] = slip_text_get(&item->name);
+    listing->batch->work.rows++;
+    return batch_row(listing->batch, cells, err);
+}
+
+static slip_status list(void *context, const struct slip_item *item, struct slip_error *err)
+{
+    struct listing *listing = context;
+    if (!item)
+        return SLIP_OK;
+    const struct slip_hooks *hooks = &listing->batch->work.hooks;
+    const struct slip_engine *engine = listing->engine;
+    struct slip_results results;
+    slip_results_init(&results);
+    work_label(&listing->batch->work, &item->perm, listing->r);
+    slip_status status = engine ? engine->accepts(&item->perm, listing->r, hooks, err)
+                                : slip_engine_choose(&engine, &item->perm, listing->r, hooks, err);
+    if (status == SLIP_OK)
+        status = slip_results_collect(&results, engine, &item->perm, listing->r, true, hooks, err);
+    slip_text_reset(&listing->permutation);
+    slip_perm_write(&listing->permutation, &item->perm);
+    for (uint64_t i = 0; status == SLIP_OK && i < results.count && i < listing->limit; i++) {
+        if (i % 4096 == 0)
+            status = slip_hooks_poll(hooks, err);
+        if (status == SLIP_OK)
+            status = show(listing, item, &results, i, err);
+    }
+    slip_results_clear(&results);
+    return status;
+}
+
+static int begin(struct listing *listing, const struct call *call)
+{
+    const struct token *limit = call_option(call, "--limit");
+    listing->limit = UINT64_MAX;
+    int code = counting_single(call, &listing->r);
+    if (!code)
+        code = counting_engine(call, &listing->engine);
+    if (!code && limit)
+        code = value_number(call, limit, 0, UINT64_MAX, &listing->limit);
+    if (!code)
+        code = batch_begin(listing->batch, call, 0, true);
+    if (!code)
+        code = counting_fits(call, listing->engine, listing->batch->source, listing->r);
+    if (code)
+        return code;
+    listing->batch->work.total = 0; /* rows are results here, and their number is not known */
+    slip_text_number(&listing->number, listing->r);
+    struct slip_column columns[MOST] = {{"permutation", SLIP_CELL_TEXT},
+                                        {"r", SLIP_CELL_NUMBER},
+                                        {"result", SLIP_CELL_TEXT},
+                                        {"multiplicity", SLIP_CELL_BIG}};
+    size_t count = MULTIPLICITY + 1;
+    if (listing->witness)
+        columns[count++] = (struct slip_column){"witness", SLIP_CELL_TEXT};
+    if (listing->batch->names)
+        columns[count++] = (struct slip_column){"name", SLIP_CELL_TEXT};
+    return batch_columns(listing->batch, columns, count);
+}
+
+static int run(struct call *call)
+{
+    struct batch batch = {.call = call};
+    struct listing listing = {.batch = &batch, .witness = call_flag(call, "--witness")};
+    int code = begin(&listing, call);
+    if (!code)
+        code = batch_run(&batch, list, &listing);
+    code = batch_end(&batch, code);
+    slip_perm_clear(&listing.result);
+    slip_text_clear(&listing.permutation);
+    slip_text_clear(&listing.number);
+    slip_text_clear(&listing.text);
+    slip_text_clear(&listing.multiplicity);
+    slip_text_clear(&listing.sequence);
+    return code;
+}
+
+const struct command command_list = {
+    .name = "list",
+    .summary = "List the different results with their multiplicities.",
+    .usage = "-r R [permutations and options]",
+    .examples = "slipcase list -r 1 132\n"
+                "slipcase list -r 2 132 --witness --limit 5\n"
+                "slipcase list -r 2 '2 4 1 3' --format csv\n",
+    .details =
+        "Columns: permutation, r, result (in lexicographic order), multiplicity (the number of\n"
+        "sets of r elements whose deletion gives the permutation back), with --witness one\n"
+        "insertion sequence (value@slot in the order of insertion, both counting from 1), and\n"
+        "name when the input has any.\n",
+    .groups = groups,
+    .run = run,
+};

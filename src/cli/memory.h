@@ -1,0 +1,10 @@
+#ifndef CLI_MEMORY_H
+#define CLI_MEMORY_H
+
+#include <stdint.h>
+
+/* Bytes of memory that the system could give now: what the kernel calls available, or the limit
+ * of the control group or of the address space when that is less. 1 GiB when nothing tells. */
+uint64_t memory_available(void);
+
+#endif

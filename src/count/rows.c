@@ -1,0 +1,135 @@
+#include "slipcase/rows.h"
+
+#ifdef _OPENMP
+#include <omp.h>
+#endif
+
+slip_status slip_engine_choose(const struct slip_engine **engine, const struct slip_perm *p,
+                               uint32_t r, const struct slip_hooks *hooks, struct slip_error *err)
+{
+    size_t count;
+    const struct slip_engine *const *list = slip_engine_list(&count); /* the fastest first */
+    slip_status status = SLIP_LIMIT;
+    for (size_t i = 0; i < count; i++) {
+        status = list[i]->accepts(p, r, hooks, err);
+        if (status == SLIP_OK) {
+            *engine = list[i];
+            return SLIP_OK;
+        }
+    }
+    return status;
+}
+
+void slip_row_init(struct slip_row *row, const struct slip_perm *perm, uint32_t r)
+{
+    row->perm = perm;
+    row->r = r;
+    row->engine = NULL;
+    mpz_init(row->distinct);
+}
+
+void slip_row_clear(struct slip_row *row)
+{
+    mpz_clear(row->distinct);
+}
+
+static slip_status count_row(struct slip_row *row, const struct slip_engine *engine,
+                             const struct slip_hooks *hooks, struct slip_error *err)
+{
+    slip_status status = slip_hooks_poll(hooks, err);
+    row->engine = engine;
+    if (status == SLIP_OK && !engine)
+        status = slip_engine_choose(&row->engine, row->perm, row->r, hooks, err);
+    else if (status == SLIP_OK)
+        status = engine->accepts(row->perm, row->r, hooks, err);
+    if (status == SLIP_OK)
+        status = row->engine->count(row->distinct, row->perm, row->r, hooks, err);
+    return status;
+}
+
+static slip_status one_by_one(struct slip_row *rows, size_t count, const struct slip_engine *engine,
+                              slip_row_done done, void *context, const struct slip_hooks *hooks,
+                              size_t *failed, struct slip_error *err)
+{
+    for (size_t i = 0; i < count; i++) {
+        slip_status status = count_row(&rows[i], engine, hooks, err);
+        if (status == SLIP_OK)
+            status = done(context, &rows[i], err);
+        if (status != SLIP_OK) {
+            *failed = i;
+            return status;
+        }
+    }
+    return SLIP_OK;
+}
+
+#ifdef _OPENMP
+static unsigned threads_for(const struct slip_row *rows, size_t count,
+                            const struct slip_hooks *hooks)
+{
+    enum { SMALL = 100000000 }; /* results a row: a second of work, at most */
+    unsigned threads = hooks && hooks->threads ? hooks->threads : (unsigned)omp_get_max_threads();
+    if (threads < 2 || count < 2 * (size_t)threads)
+        return 1;
+    for (size_t i = 0; i < count; i++)
+        if (slip_count_estimate(rows[i].perm->n, rows[i].r) > SMALL)
+            return 1;
+    return threads;
+}
+
+static slip_status shared_out(struct slip_row *rows, size_t count, const struct slip_engine *engine,
+                              slip_row_done done, void *context, const struct slip_hooks *hooks,
+                              unsigned threads, size_t *failed, struct slip_error *err)
+{
+    struct slip_hooks part = hooks ? *hooks : (struct slip_hooks){0};
+    part.threads = 1;
+    part.memory /= threads;
+    part.progress = NULL; /* rows are the progress */
+    slip_status result = SLIP_OK;
+    int stop = 0; /* a row failed: later ones need not begin */
+#pragma omp parallel for ordered schedule(dynamic, 1) num_threads(threads)
+    for (size_t i = 0; i < count; i++) {
+        struct slip_error local = SLIP_ERROR_NONE;
+        int stopped;
+#pragma omp atomic read
+        stopped = stop;
+        slip_status status = stopped ? SLIP_OK : count_row(&rows[i], engine, &part, &local);
+        if (status != SLIP_OK) {
+#pragma omp atomic write
+            stop = 1;
+        }
+#pragma omp ordered
+        if (result == SLIP_OK) {
+            /* A row that was skipped because a later one had failed first is counted now. */
+            if (stopped)
+                status = count_row(&rows[i], engine, &part, &local);
+            if (status == SLIP_OK)
+                status = done(context, &rows[i], &local);
+            if (status != SLIP_OK) {
+                result = status;
+                *failed = i;
+                if (err)
+                    *err = local;
+#pragma omp atomic write
+                stop = 1;
+            }
+        }
+    }
+    return result;
+}
+#endif
+
+slip_status slip_rows_count(struct slip_row *rows, size_t count, const struct slip_engine *engine,
+                            slip_row_done done, void *context, const struct slip_hooks *hooks,
+                            size_t *failed, struct slip_error *err)
+{
+    size_t unused;
+    if (!failed)
+        failed = &unused;
+#ifdef _OPENMP
+    unsigned threads = threads_for(rows, count, hooks);
+    if (threads > 1)
+        return shared_out(rows, count, engine, done, context, hooks, threads, failed, err);
+#endif
+    return one_by_one(rows, count, engine, done, context, hooks, failed, err);
+}
