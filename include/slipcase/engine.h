@@ -90,6 +90,15 @@ SLIP_API slip_status slip_check_row(const mpz_t distinct, const struct slip_perm
 SLIP_API slip_status slip_brute_count(mpz_t distinct, const struct slip_perm *p, uint32_t r,
                                       const struct slip_hooks *hooks, struct slip_error *err);
 
+/*
+ * Counts the row with every engine that takes it and is not `used`, and compares: SLIP_DIFFERS
+ * with the names of the two engines and both figures. *engines (may be NULL): how many were
+ * compared with.
+ */
+SLIP_API slip_status slip_check_engines(const mpz_t distinct, const struct slip_engine *used,
+                                        const struct slip_perm *p, uint32_t r, size_t *engines,
+                                        const struct slip_hooks *hooks, struct slip_error *err);
+
 /* ---- sizes known beforehand ---- */
 
 /*

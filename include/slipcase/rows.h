@@ -6,11 +6,12 @@
 #include "slipcase/engine.h"
 
 /*
- * The fastest engine whose result is proved and that takes the job. The error when there is none
- * is that of the last engine asked. *engine is not changed then.
+ * The fastest engine whose result is proved and that takes the job (and, when lists is true, can
+ * list the results). The error when there is none is that of the last engine asked. *engine is
+ * not changed then.
  */
 SLIP_API slip_status slip_engine_choose(const struct slip_engine **engine,
-                                        const struct slip_perm *p, uint32_t r,
+                                        const struct slip_perm *p, uint32_t r, bool lists,
                                         const struct slip_hooks *hooks, struct slip_error *err);
 
 struct slip_row {

@@ -20,6 +20,7 @@
 
 /* The values are the exit codes of the program. */
 typedef enum slip_status {
+    SLIP_ENOUGH = -1, /* a callback's way to end work early: no error, no message */
     SLIP_OK = 0,
     SLIP_DATA = 1,          /* bad input data: not a permutation, an empty file, ... */
     SLIP_USAGE = 2,         /* an argument out of the documented range or of the wrong form */

@@ -22,6 +22,8 @@ static const struct option options[] = {
     {"--check", NULL, false,
      "check every row: the multiplicities of the results against the number\n"
      "of placements, and small rows against trying all permutations"},
+    {"--cross-check", NULL, false,
+     "count every row with every engine that takes it; a difference is exit 5"},
 };
 static const struct option_group own = {"What is shown", options, sizeof options / sizeof *options};
 static const struct option_group *const groups[] = {&sources_options, &counting_options, &own,
@@ -35,7 +37,7 @@ struct counting {
     struct range r;
     struct columns columns;
     struct slip_summary summary;
-    bool check, summarise;
+    bool check, cross_check, summarise;
     struct slip_item items[CHUNK];
     size_t held;
     const struct slip_item *showing; /* the item of the row that is being shown */
@@ -101,6 +103,9 @@ static slip_status row_done(void *context, struct slip_row *row, struct slip_err
     if (counting->check)
         status =
             slip_check_row(row->distinct, row->perm, row->r, &counting->batch->work.hooks, err);
+    if (status == SLIP_OK && counting->cross_check)
+        status = slip_check_engines(row->distinct, row->engine, row->perm, row->r, NULL,
+                                    &counting->batch->work.hooks, err);
     if (status == SLIP_OK && counting->summarise)
         status = summarise(counting, item, row, err);
     else if (status == SLIP_OK)
@@ -190,6 +195,7 @@ static int run(struct call *call)
         return complain_memory();
     counting->batch = &batch;
     counting->check = call_flag(call, "--check");
+    counting->cross_check = call_flag(call, "--cross-check");
     counting->summarise = call_flag(call, "--summary");
     slip_summary_init(&counting->summary);
     int code = begin(counting, call);

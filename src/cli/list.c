@@ -8,6 +8,7 @@
 #include "cli/marked.h"
 #include "cli/message.h"
 #include "cli/sources.h"
+#include "slipcase/distribution.h"
 #include "slipcase/embedding.h"
 #include "slipcase/insertion.h"
 #include "slipcase/rows.h"
@@ -16,7 +17,13 @@ static const struct option options[] = {
     {"--witness", NULL, false,
      "add one insertion sequence for each result, as value@slot value@slot ...;\n"
      "the table also puts the inserted elements in brackets"},
+    {"--order", "ORDER", false,
+     "lexicographic (default; all results are held in memory and sorted), or\n"
+     "generated: the first rows at once, any number of them"},
     {"--limit", "K", false, "only the first K results of each permutation"},
+    {"--distribution", "WHAT", false,
+     "instead of results, how many of them have each multiplicity: WHAT is\n"
+     "multiplicity"},
 };
 static const struct option_group own = {"What is shown", options, sizeof options / sizeof *options};
 static const struct option_group *const groups[] = {&sources_options, &counting_options, &own,
@@ -26,10 +33,12 @@ enum { PERMUTATION, R, RESULT, MULTIPLICITY, MOST = MULTIPLICITY + 3 };
 
 struct listing {
     struct batch *batch;
-    const struct slip_engine *engine;
+    const struct slip_engine *engine; /* NULL: chosen for each permutation */
     uint32_t r;
-    bool witness;
-    uint64_t limit;
+    bool witness, generated, distribution;
+    uint64_t limit;               /* results to show of each permutation */
+    uint64_t shown;               /* results shown of this one */
+    const struct slip_item *item; /* this one */
     struct slip_perm result;
     struct slip_text permutation, number, text, multiplicity, sequence;
 };
@@ -79,18 +88,18 @@ static slip_status write_witness(struct listing *listing, const struct slip_perm
     return status;
 }
 
-static slip_status show(struct listing *listing, const struct slip_item *item,
-                        const struct slip_results *results, uint64_t i, struct slip_error *err)
+/* One result: its row. */
+static slip_status show(struct listing *listing, const uint64_t *key, uint32_t length,
+                        uint64_t multiplicity, struct slip_error *err)
 {
-    slip_status status =
-        slip_packed_to(&listing->result, results->keys + i * results->words, results->length, err);
+    slip_status status = slip_packed_to(&listing->result, key, length, err);
     slip_text_reset(&listing->text);
     slip_text_reset(&listing->multiplicity);
     slip_text_reset(&listing->sequence);
     slip_perm_write(&listing->text, &listing->result);
-    slip_text_number(&listing->multiplicity, results->multiplicities[i]);
+    slip_text_number(&listing->multiplicity, multiplicity);
     if (status == SLIP_OK && listing->witness)
-        status = write_witness(listing, &item->perm, err);
+        status = write_witness(listing, &listing->item->perm, err);
     if (status != SLIP_OK)
         return status;
     const char *cells[MOST] = {slip_text_get(&listing->permutation),
@@ -99,9 +108,79 @@ static slip_status show(struct listing *listing, const struct slip_item *item,
     size_t count = MULTIPLICITY + 1;
     if (listing->witness)
         cells[count++] = slip_text_get(&listing->sequence);
-    cells[count] = slip_text_get(&item->name);
+    cells[count] = slip_text_get(&listing->item->name);
     listing->batch->work.rows++;
     return batch_row(listing->batch, cells, err);
+}
+
+/* Results as they come: a visitor. */
+static slip_status show_batch(void *context, const struct slip_batch *results,
+                              struct slip_error *err)
+{
+    struct listing *listing = context;
+    for (size_t i = 0; i < results->count; i++) {
+        if (listing->shown == listing->limit)
+            return SLIP_ENOUGH;
+        slip_status status = show(listing, results->keys + i * results->words, results->length,
+                                  results->multiplicities[i], err);
+        if (status != SLIP_OK)
+            return status;
+        listing->shown++;
+    }
+    return listing->shown == listing->limit ? SLIP_ENOUGH : SLIP_OK;
+}
+
+static slip_status list_sorted(struct listing *listing, const struct slip_engine *engine,
+                               struct slip_error *err)
+{
+    const struct slip_hooks *hooks = &listing->batch->work.hooks;
+    struct slip_results results;
+    slip_results_init(&results);
+    slip_status status =
+        slip_results_collect(&results, engine, &listing->item->perm, listing->r, true, hooks, err);
+    for (uint64_t i = 0; status == SLIP_OK && i < results.count && i < listing->limit; i++) {
+        if (i % 4096 == 0)
+            status = slip_hooks_poll(hooks, err);
+        if (status == SLIP_OK)
+            status = show(listing, results.keys + i * results.words, results.length,
+                          results.multiplicities[i], err);
+    }
+    slip_results_clear(&results);
+    return status;
+}
+
+static slip_status list_generated(struct listing *listing, const struct slip_engine *engine,
+                                  struct slip_error *err)
+{
+    listing->shown = 0;
+    if (listing->limit == 0)
+        return SLIP_OK;
+    slip_status status = engine->visit(&listing->item->perm, listing->r, true, show_batch, listing,
+                                       &listing->batch->work.hooks, err);
+    return status == SLIP_ENOUGH ? SLIP_OK : status;
+}
+
+static slip_status list_distribution(struct listing *listing, const struct slip_engine *engine,
+                                     struct slip_error *err)
+{
+    struct slip_distribution found;
+    slip_distribution_init(&found);
+    slip_status status = slip_distribution_multiplicity(
+        &found, engine, &listing->item->perm, listing->r, &listing->batch->work.hooks, err);
+    for (size_t i = 0; i < found.count && status == SLIP_OK; i++) {
+        slip_text_reset(&listing->multiplicity);
+        slip_text_number(&listing->multiplicity, found.values[i]);
+        slip_text_reset(&listing->text);
+        slip_text_number(&listing->text, found.counts[i]);
+        const char *cells[] = {slip_text_get(&listing->permutation),
+                               slip_text_get(&listing->number),
+                               slip_text_get(&listing->multiplicity), slip_text_get(&listing->text),
+                               slip_text_get(&listing->item->name)};
+        listing->batch->work.rows++;
+        status = batch_row(listing->batch, cells, err);
+    }
+    slip_distribution_clear(&found);
+    return status;
 }
 
 static slip_status list(void *context, const struct slip_item *item, struct slip_error *err)
@@ -111,52 +190,79 @@ static slip_status list(void *context, const struct slip_item *item, struct slip
         return SLIP_OK;
     const struct slip_hooks *hooks = &listing->batch->work.hooks;
     const struct slip_engine *engine = listing->engine;
-    struct slip_results results;
-    slip_results_init(&results);
     work_label(&listing->batch->work, &item->perm, listing->r);
-    slip_status status = engine ? engine->accepts(&item->perm, listing->r, hooks, err)
-                                : slip_engine_choose(&engine, &item->perm, listing->r, hooks, err);
-    if (status == SLIP_OK)
-        status = slip_results_collect(&results, engine, &item->perm, listing->r, true, hooks, err);
+    slip_status status =
+        engine ? engine->accepts(&item->perm, listing->r, hooks, err)
+               : slip_engine_choose(&engine, &item->perm, listing->r, true, hooks, err);
+    if (status != SLIP_OK)
+        return status;
+    listing->item = item;
     slip_text_reset(&listing->permutation);
     slip_perm_write(&listing->permutation, &item->perm);
-    for (uint64_t i = 0; status == SLIP_OK && i < results.count && i < listing->limit; i++) {
-        if (i % 4096 == 0)
-            status = slip_hooks_poll(hooks, err);
-        if (status == SLIP_OK)
-            status = show(listing, item, &results, i, err);
-    }
-    slip_results_clear(&results);
-    return status;
+    if (listing->distribution)
+        return list_distribution(listing, engine, err);
+    return listing->generated ? list_generated(listing, engine, err)
+                              : list_sorted(listing, engine, err);
 }
 
-static int begin(struct listing *listing, const struct call *call)
+/* The options of this command; 0 or 2. */
+static int read_options(struct listing *listing, const struct call *call)
 {
-    const struct token *limit = call_option(call, "--limit");
+    static const char *const orders[] = {"lexicographic", "generated"};
+    static const char *const statistics[] = {"multiplicity"};
+    const struct token *limit = call_option(call, "--limit"), *order = call_option(call, "--order"),
+                       *distribution = call_option(call, "--distribution");
+    size_t chosen = 0, unused;
     listing->limit = UINT64_MAX;
     int code = counting_single(call, &listing->r);
     if (!code)
         code = counting_engine(call, &listing->engine);
+    if (!code && listing->engine && !listing->engine->visit)
+        code = misuse_missing(call, "the engine %s counts without listing", listing->engine->name);
     if (!code && limit)
         code = value_number(call, limit, 0, UINT64_MAX, &listing->limit);
-    if (!code)
-        code = batch_begin(listing->batch, call, 0, true);
-    if (!code)
-        code = counting_fits(call, listing->engine, listing->batch->source, listing->r);
-    if (code)
-        return code;
-    listing->batch->work.total = 0; /* rows are results here, and their number is not known */
-    slip_text_number(&listing->number, listing->r);
+    if (!code && order)
+        code = value_word(call, order, orders, 2, &chosen);
+    if (!code && distribution)
+        code = value_word(call, distribution, statistics, 1, &unused);
+    if (!code && distribution && (limit || order || listing->witness))
+        code = misuse_missing(call, "--distribution counts all results: leave out %s",
+                              limit   ? "--limit"
+                              : order ? "--order"
+                                      : "--witness");
+    listing->generated = chosen == 1;
+    listing->distribution = distribution != NULL;
+    return code;
+}
+
+static int set_columns(struct listing *listing)
+{
     struct slip_column columns[MOST] = {{"permutation", SLIP_CELL_TEXT},
                                         {"r", SLIP_CELL_NUMBER},
                                         {"result", SLIP_CELL_TEXT},
                                         {"multiplicity", SLIP_CELL_BIG}};
+    if (listing->distribution) {
+        columns[RESULT] = (struct slip_column){"multiplicity", SLIP_CELL_BIG};
+        columns[MULTIPLICITY] = (struct slip_column){"results", SLIP_CELL_BIG};
+    }
     size_t count = MULTIPLICITY + 1;
     if (listing->witness)
         columns[count++] = (struct slip_column){"witness", SLIP_CELL_TEXT};
     if (listing->batch->names)
         columns[count++] = (struct slip_column){"name", SLIP_CELL_TEXT};
     return batch_columns(listing->batch, columns, count);
+}
+
+static int begin(struct listing *listing, const struct call *call)
+{
+    int code = read_options(listing, call);
+    if (!code)
+        code = batch_begin(listing->batch, call, 0, true);
+    if (!code)
+        code = counting_fits(call, listing->engine, listing->batch->source, listing->r);
+    listing->batch->work.total = 0; /* rows are results here, and their number is not known */
+    slip_text_number(&listing->number, listing->r);
+    return code ? code : set_columns(listing);
 }
 
 static int run(struct call *call)
@@ -182,12 +288,14 @@ const struct command command_list = {
     .usage = "-r R [permutations and options]",
     .examples = "slipcase list -r 1 132\n"
                 "slipcase list -r 2 132 --witness --limit 5\n"
-                "slipcase list -r 2 '2 4 1 3' --format csv\n",
+                "slipcase list -r 2 '2 4 1 3' --format csv\n"
+                "slipcase list -r 3 '2 4 1 3' --distribution multiplicity\n",
     .details =
         "Columns: permutation, r, result (in lexicographic order), multiplicity (the number of\n"
         "sets of r elements whose deletion gives the permutation back), with --witness one\n"
         "insertion sequence (value@slot in the order of insertion, both counting from 1), and\n"
-        "name when the input has any.\n",
+        "name when the input has any. With --distribution: permutation, r, multiplicity,\n"
+        "results (how many have it).\n",
     .groups = groups,
     .run = run,
 };

@@ -15,6 +15,7 @@ static const struct option options[] = {
     {"--memory", "SIZE", false,
      "memory that may be used, such as 500M or 8G (default: three quarters\n"
      "of what is available)"},
+    {"--threads", "K", false, "threads to work with (default: all processors)"},
 };
 
 const struct option_group work_options = {"Limits", options, sizeof options / sizeof *options};
@@ -75,9 +76,14 @@ int work_begin(struct work *work, const struct call *call)
     work->begun = work->last = clock_now();
     work->shows = isatty(STDERR_FILENO) && !call_flag(call, "--quiet");
     const struct token *memory = call_option(call, "--memory");
+    const struct token *threads = call_option(call, "--threads");
+    uint64_t number = 0;
     int code = memory ? value_size(call, memory, &work->hooks.memory) : 0;
     if (!memory)
         work->hooks.memory = memory_available() / 4 * 3;
+    if (!code && threads)
+        code = value_number(call, threads, 1, 1024, &number);
+    work->hooks.threads = (unsigned)number;
     struct sigaction action = {.sa_handler = on_signal};
     sigemptyset(&action.sa_mask);
     sigaction(SIGINT, &action, NULL);

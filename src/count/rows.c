@@ -5,12 +5,15 @@
 #endif
 
 slip_status slip_engine_choose(const struct slip_engine **engine, const struct slip_perm *p,
-                               uint32_t r, const struct slip_hooks *hooks, struct slip_error *err)
+                               uint32_t r, bool lists, const struct slip_hooks *hooks,
+                               struct slip_error *err)
 {
     size_t count;
     const struct slip_engine *const *list = slip_engine_list(&count); /* the fastest first */
     slip_status status = SLIP_LIMIT;
     for (size_t i = 0; i < count; i++) {
+        if (lists && !list[i]->visit)
+            continue;
         status = list[i]->accepts(p, r, hooks, err);
         if (status == SLIP_OK) {
             *engine = list[i];
@@ -39,7 +42,7 @@ static slip_status count_row(struct slip_row *row, const struct slip_engine *eng
     slip_status status = slip_hooks_poll(hooks, err);
     row->engine = engine;
     if (status == SLIP_OK && !engine)
-        status = slip_engine_choose(&row->engine, row->perm, row->r, hooks, err);
+        status = slip_engine_choose(&row->engine, row->perm, row->r, false, hooks, err);
     else if (status == SLIP_OK)
         status = engine->accepts(row->perm, row->r, hooks, err);
     if (status == SLIP_OK)
