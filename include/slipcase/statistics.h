@@ -17,14 +17,6 @@ enum slip_statistic_argument {
     SLIP_STATISTIC_SIZE,    /* an integer from 1: "intervals(3)" */
 };
 
-struct slip_statistic;
-
-/* Computes the value for p. Reads s->pattern or s->size if its kind takes an argument. */
-typedef slip_status (*slip_statistic_function)(mpz_t value, const struct slip_statistic *s,
-                                               const struct slip_perm *p,
-                                               const struct slip_hooks *hooks,
-                                               struct slip_error *err);
-
 /* A line of the registry. */
 struct slip_statistic_kind {
     const char *name; /* lower-case letters, digits and '_', begins with a letter */
@@ -38,8 +30,7 @@ struct slip_statistic_kind {
      * pattern: the reversed) argument; NULL when the registry has none. */
     const char *reversed;
     const char *cost;   /* time for length n; memory is O(n) throughout */
-    const char *source; /* of the method or the definition; "definition" when it is only that */
-    slip_statistic_function value;
+    const char *source; /* of the definition or of the method */
 };
 
 /* The registry in its fixed order; *count lines. */
