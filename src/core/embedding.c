@@ -15,22 +15,46 @@ struct search {
     struct slip_error *err;
 };
 
-static slip_status prepare(struct search *s)
+/*
+ * Neighbours in value among earlier positions, in O(k): all values stand in a doubly linked list
+ * in their order (0 and k + 1 at the ends), and leave it from the last position to the first; what
+ * a value's neighbours are when it leaves are those among the positions before it.
+ */
+static void link_neighbours(struct search *s, uint32_t *scratch)
 {
     uint32_t k = s->pattern->n;
-    s->below = calloc((size_t)3 * k + 1, sizeof *s->below);
-    if (!s->below)
-        return slip_fail_memory(s->err, ((uint64_t)3 * k + 1) * sizeof *s->below);
+    const uint32_t *at = s->pattern->at;
+    uint32_t *lower = scratch, *higher = lower + k + 2, *place = higher + k + 2;
+    place[0] = place[k + 1] = 0;
+    for (uint32_t i = 0; i < k; i++)
+        place[at[i]] = i + 1;
+    for (uint32_t v = 1; v <= k; v++) {
+        lower[v] = v - 1;
+        higher[v] = v + 1;
+    }
+    for (uint32_t i = k; i-- > 0;) {
+        uint32_t low = lower[at[i]], high = higher[at[i]];
+        s->below[i] = place[low];
+        s->above[i] = place[high];
+        higher[low] = high;
+        lower[high] = low;
+    }
+}
+
+static slip_status prepare(struct search *s)
+{
+    size_t k = s->pattern->n, scratch_room = 3 * (k + 2);
+    s->below = malloc(3 * k * sizeof *s->below);
+    uint32_t *scratch = malloc(scratch_room * sizeof *scratch);
+    if (!s->below || !scratch) {
+        free(s->below);
+        free(scratch);
+        return slip_fail_memory(s->err, (3 * k + scratch_room) * sizeof *scratch);
+    }
     s->above = s->below + k;
     s->chosen = s->above + k;
-    const uint32_t *at = s->pattern->at;
-    for (uint32_t i = 0; i < k; i++)
-        for (uint32_t j = 0; j < i; j++) {
-            if (at[j] < at[i] && (!s->below[i] || at[j] > at[s->below[i] - 1]))
-                s->below[i] = j + 1;
-            if (at[j] > at[i] && (!s->above[i] || at[j] < at[s->above[i] - 1]))
-                s->above[i] = j + 1;
-        }
+    link_neighbours(s, scratch);
+    free(scratch);
     return SLIP_OK;
 }
 
@@ -48,20 +72,23 @@ static uint32_t candidate(const struct search *s, uint32_t k, uint32_t from)
     return s->text->n;
 }
 
+enum { POLL_AFTER = 1 << 22 }; /* some milliseconds */
+
 /* Visits embeddings in lexicographic order: stops at the first one when count is NULL. */
 static slip_status run(struct search *s, bool *found, mpz_t count)
 {
-    uint32_t k = 0, from = 0, steps = 0;
-    uint64_t seen = 0;
+    uint32_t k = 0, from = 0;
+    uint64_t seen = 0, looked = 0; /* embeddings, and elements looked at since the last poll */
     *found = false;
     for (;;) {
-        if (++steps == 0x100000) {
-            steps = 0;
+        if (looked >= POLL_AFTER) {
+            looked = 0;
             slip_status status = slip_hooks_poll(s->hooks, s->err);
             if (status != SLIP_OK)
                 return status;
         }
         uint32_t i = candidate(s, k, from);
+        looked += (uint64_t)i - from + 1;
         if (i == s->text->n) {
             if (k == 0)
                 break;
@@ -98,8 +125,9 @@ static slip_status embed(bool *found, uint32_t *positions, mpz_t count,
         return SLIP_OK;
     struct search s = {.pattern = pattern, .text = text, .hooks = hooks, .err = err};
     slip_status status = prepare(&s);
-    if (status == SLIP_OK)
-        status = run(&s, found, count);
+    if (status != SLIP_OK)
+        return status;
+    status = run(&s, found, count);
     if (status == SLIP_OK && *found && positions)
         for (uint32_t k = 0; k < pattern->n; k++)
             positions[k] = s.chosen[k];

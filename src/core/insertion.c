@@ -47,8 +47,9 @@ static slip_status read_count(uint32_t *number, const char *text, size_t length,
 {
     size_t start = *at;
     uint64_t value = 0;
-    while (*at < length && slip_is_digit(text[*at]) && value <= UINT32_MAX)
-        value = 10 * value + (uint64_t)(text[(*at)++] - '0');
+    for (; *at < length && slip_is_digit(text[*at]); (*at)++)
+        if (value <= UINT32_MAX)
+            value = 10 * value + (uint64_t)(text[*at] - '0');
     if (*at == start || value == 0 || value > UINT32_MAX)
         return slip_fail_at(err, SLIP_DATA, start + 1, *at > start ? (uint32_t)(*at - start) : 1,
                             "expected %s (1, 2, 3, ...) in value@slot", what);

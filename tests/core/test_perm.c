@@ -51,6 +51,47 @@ static void says_where_input_is_wrong(void **state)
     slip_perm_clear(&p);
 }
 
+static void points_at_the_whole_element(void **state)
+{
+    (void)state;
+    static const struct {
+        const char *text;
+        unsigned column, span;
+    } bad[] = {
+        {"1 2 0002", 5, 4}, {"[1,  17, 2]", 6, 2},  {"1 10 2", 3, 2},  {"1223", 3, 1},
+        {"(122)", 4, 1},    {"1 2 \xC3\xA9", 5, 2}, {"1 2 000", 5, 3}, {"1 2 99999999999 3", 5, 11},
+    };
+    struct slip_perm p;
+    slip_perm_init(&p);
+    for (size_t i = 0; i < sizeof bad / sizeof *bad; i++) {
+        struct slip_error err = SLIP_ERROR_NONE;
+        assert_int_equal(slip_perm_parse(&p, bad[i].text, strlen(bad[i].text), &err), SLIP_DATA);
+        if (err.column != bad[i].column || err.span != bad[i].span)
+            fail_msg("'%s': column %u+%u: %s", bad[i].text, (unsigned)err.column, err.span,
+                     err.message);
+    }
+    slip_perm_clear(&p);
+}
+
+static void inverse_undoes(void **state)
+{
+    (void)state;
+    struct slip_perm p, q;
+    slip_perm_init(&p);
+    slip_perm_init(&q);
+    for (uint32_t n = 0; n <= 6; n++) {
+        assert_int_equal(slip_perm_identity(&p, n, NULL), SLIP_OK);
+        do {
+            assert_int_equal(slip_perm_inverse(&q, &p, NULL), SLIP_OK);
+            assert_int_equal(q.n, n);
+            for (uint32_t i = 0; i < n; i++)
+                assert_int_equal(q.at[p.at[i] - 1], i + 1);
+        } while (slip_perm_next(&p));
+    }
+    slip_perm_clear(&p);
+    slip_perm_clear(&q);
+}
+
 static void successor_walks_through_all(void **state)
 {
     (void)state;
@@ -92,10 +133,9 @@ static void set_checks_its_values(void **state)
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test(parses_every_notation),
-        cmocka_unit_test(says_where_input_is_wrong),
-        cmocka_unit_test(successor_walks_through_all),
-        cmocka_unit_test(set_checks_its_values),
+        cmocka_unit_test(parses_every_notation),       cmocka_unit_test(says_where_input_is_wrong),
+        cmocka_unit_test(points_at_the_whole_element), cmocka_unit_test(inverse_undoes),
+        cmocka_unit_test(successor_walks_through_all), cmocka_unit_test(set_checks_its_values),
     };
     return cmocka_run_group_tests_name("core/perm", tests, NULL, NULL);
 }
