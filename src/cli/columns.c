@@ -1,10 +1,8 @@
 #include "cli/columns.h"
 
-#include <stdio.h>
-#include <stdlib.h>
 #include <string.h>
 
-#include "cli/message.h"
+#include "cli/values.h"
 #include "slipcase/insertion.h"
 #include "slipcase/symmetry.h"
 
@@ -131,64 +129,20 @@ static const struct count_column all[] = {
 };
 enum { ALL = sizeof all / sizeof *all, USUAL = 8, NAME = 8 };
 
-static int unknown_column(const struct call *call, const struct token *token, const char *word,
-                          size_t span)
-{
-    const char *names[ALL];
-    char text[40];
-    for (size_t i = 0; i < ALL; i++)
-        names[i] = all[i].name;
-    snprintf(text, sizeof text, "%.*s", (int)span, word);
-    const char *near = span && span < sizeof text ? nearest(text, names, ALL) : NULL;
-    size_t offset = token->offset + (size_t)(word - token->value);
-    if (near)
-        return misuse(call, token->index, offset, span,
-                      "there is no column '%s': did you mean '%s'?", text, near);
-    return misuse(call, token->index, offset, span,
-                  "there is no column '%s' (see --help for their names)", text);
-}
-
-/* Adds the column that is named by the first `span` bytes of word. */
-static int add_column(struct columns *columns, const struct call *call, const struct token *token,
-                      const char *word, size_t span)
-{
-    for (size_t i = 0; i < ALL; i++) {
-        if (strlen(all[i].name) != span || memcmp(all[i].name, word, span))
-            continue;
-        if (columns_have(columns, all[i].name) || columns->count == COLUMNS_MOST)
-            return misuse(call, token->index, token->offset + (size_t)(word - token->value), span,
-                          "column '%s' is given twice", all[i].name);
-        columns->column[columns->count++] = &all[i];
-        return 0;
-    }
-    return unknown_column(call, token, word, span);
-}
-
 int columns_choose(struct columns *columns, const struct call *call, bool names)
 {
     const struct token *token = call_option(call, "--columns");
-    columns->count = 0;
-    if (!token) {
-        for (size_t i = 0; i < USUAL; i++)
-            columns->column[columns->count++] = &all[i];
-        if (names)
-            columns->column[columns->count++] = &all[NAME];
-        return 0;
-    }
-    const char *word = token->value;
-    for (;;) {
-        size_t span = strcspn(word, ",");
-        int code = add_column(columns, call, token, word, span);
-        if (code || !word[span])
-            return code;
-        word += span + 1;
-    }
-}
-
-bool columns_have(const struct columns *columns, const char *name)
-{
+    const char *words[ALL];
+    size_t chosen[ALL], count = 0;
+    for (size_t i = 0; i < ALL; i++)
+        words[i] = all[i].name;
+    for (; count < USUAL; count++)
+        chosen[count] = count;
+    if (names)
+        chosen[count++] = NAME;
+    int code = token ? value_list(call, token, "column", words, ALL, chosen, &count) : 0;
+    columns->count = code ? 0 : count;
     for (size_t i = 0; i < columns->count; i++)
-        if (!strcmp(columns->column[i]->name, name))
-            return true;
-    return false;
+        columns->column[i] = &all[chosen[i]];
+    return code;
 }

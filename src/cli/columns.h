@@ -26,7 +26,4 @@ struct columns {
 /* The columns of --columns, or the usual ones (with `name` if names); 0 or 2. */
 int columns_choose(struct columns *columns, const struct call *call, bool names);
 
-/* Whether --columns asks for it. */
-bool columns_have(const struct columns *columns, const char *name);
-
 #endif

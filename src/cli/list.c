@@ -20,6 +20,9 @@ static const struct option options[] = {
     {"--order", "ORDER", false,
      "lexicographic (default; all results are held in memory and sorted), or\n"
      "generated: the first rows at once, any number of them"},
+    {"--columns", "LIST", false,
+     "the columns to print, in this order, separated by commas; the\n"
+     "multiplicity is worked out only when it is among them"},
     {"--limit", "K", false, "only the first K results of each permutation"},
     {"--distribution", "WHAT", false,
      "instead of results, how many of them have each multiplicity: WHAT is\n"
@@ -29,13 +32,23 @@ static const struct option_group own = {"What is shown", options, sizeof options
 static const struct option_group *const groups[] = {&sources_options, &counting_options, &own,
                                                     &work_options,    &output_options,   NULL};
 
-enum { PERMUTATION, R, RESULT, MULTIPLICITY, MOST = MULTIPLICITY + 3 };
+enum { PERMUTATION, R, RESULT, MULTIPLICITY, WITNESS, NAME, MOST };
+
+static const struct slip_column all[MOST] = {
+    [PERMUTATION] = {"permutation", SLIP_CELL_TEXT},
+    [R] = {"r", SLIP_CELL_NUMBER},
+    [RESULT] = {"result", SLIP_CELL_TEXT},
+    [MULTIPLICITY] = {"multiplicity", SLIP_CELL_BIG},
+    [WITNESS] = {"witness", SLIP_CELL_TEXT},
+    [NAME] = {"name", SLIP_CELL_TEXT},
+};
 
 struct listing {
     struct batch *batch;
     const struct slip_engine *engine; /* NULL: chosen for each permutation */
     uint32_t r;
-    bool witness, generated, distribution;
+    size_t columns[MOST], count; /* which columns are shown */
+    bool witness, multiplicities, generated, distribution;
     uint64_t limit;               /* results to show of each permutation */
     uint64_t shown;               /* results shown of this one */
     const struct slip_item *item; /* this one */
@@ -97,18 +110,21 @@ static slip_status show(struct listing *listing, const uint64_t *key, uint32_t l
     slip_text_reset(&listing->multiplicity);
     slip_text_reset(&listing->sequence);
     slip_perm_write(&listing->text, &listing->result);
-    slip_text_number(&listing->multiplicity, multiplicity);
+    if (listing->multiplicities)
+        slip_text_number(&listing->multiplicity, multiplicity);
     if (status == SLIP_OK && listing->witness)
         status = write_witness(listing, &listing->item->perm, err);
     if (status != SLIP_OK)
         return status;
-    const char *cells[MOST] = {slip_text_get(&listing->permutation),
-                               slip_text_get(&listing->number), slip_text_get(&listing->text),
-                               slip_text_get(&listing->multiplicity)};
-    size_t count = MULTIPLICITY + 1;
-    if (listing->witness)
-        cells[count++] = slip_text_get(&listing->sequence);
-    cells[count] = slip_text_get(&listing->item->name);
+    const char *cell[MOST] = {[PERMUTATION] = slip_text_get(&listing->permutation),
+                              [R] = slip_text_get(&listing->number),
+                              [RESULT] = slip_text_get(&listing->text),
+                              [MULTIPLICITY] = slip_text_get(&listing->multiplicity),
+                              [WITNESS] = slip_text_get(&listing->sequence),
+                              [NAME] = slip_text_get(&listing->item->name)};
+    const char *cells[MOST];
+    for (size_t c = 0; c < listing->count; c++)
+        cells[c] = cell[listing->columns[c]];
     listing->batch->work.rows++;
     return batch_row(listing->batch, cells, err);
 }
@@ -122,7 +138,7 @@ static slip_status show_batch(void *context, const struct slip_batch *results,
         if (listing->shown == listing->limit)
             return SLIP_ENOUGH;
         slip_status status = show(listing, results->keys + i * results->words, results->length,
-                                  results->multiplicities[i], err);
+                                  results->multiplicities ? results->multiplicities[i] : 0, err);
         if (status != SLIP_OK)
             return status;
         listing->shown++;
@@ -136,14 +152,14 @@ static slip_status list_sorted(struct listing *listing, const struct slip_engine
     const struct slip_hooks *hooks = &listing->batch->work.hooks;
     struct slip_results results;
     slip_results_init(&results);
-    slip_status status =
-        slip_results_collect(&results, engine, &listing->item->perm, listing->r, true, hooks, err);
+    slip_status status = slip_results_collect(&results, engine, &listing->item->perm, listing->r,
+                                              listing->multiplicity, hooks, err);
     for (uint64_t i = 0; status == SLIP_OK && i < results.count && i < listing->limit; i++) {
         if (i % 4096 == 0)
             status = slip_hooks_poll(hooks, err);
         if (status == SLIP_OK)
             status = show(listing, results.keys + i * results.words, results.length,
-                          results.multiplicities[i], err);
+                          results.multiplicities ? results.multiplicities[i] : 0, err);
     }
     slip_results_clear(&results);
     return status;
@@ -155,8 +171,8 @@ static slip_status list_generated(struct listing *listing, const struct slip_eng
     listing->shown = 0;
     if (listing->limit == 0)
         return SLIP_OK;
-    slip_status status = engine->visit(&listing->item->perm, listing->r, true, show_batch, listing,
-                                       &listing->batch->work.hooks, err);
+    slip_status status = engine->visit(&listing->item->perm, listing->r, listing->multiplicities,
+                                       show_batch, listing, &listing->batch->work.hooks, err);
     return status == SLIP_ENOUGH ? SLIP_OK : status;
 }
 
@@ -205,13 +221,31 @@ static slip_status list(void *context, const struct slip_item *item, struct slip
                               : list_sorted(listing, engine, err);
 }
 
+/* --columns: what is not shown is not worked out. */
+static int read_columns(struct listing *listing, const struct call *call, const struct token *token)
+{
+    const char *words[MOST];
+    for (size_t c = 0; c < MOST; c++)
+        words[c] = all[c].name;
+    int code = value_list(call, token, "column", words, MOST, listing->columns, &listing->count);
+    if (!code && listing->witness)
+        code = misuse_missing(call, "--columns names the columns: leave out --witness, and name "
+                                    "witness among them");
+    for (size_t c = 0; !code && c < listing->count; c++) {
+        listing->witness = listing->witness || listing->columns[c] == WITNESS;
+        listing->multiplicities = listing->multiplicities || listing->columns[c] == MULTIPLICITY;
+    }
+    return code;
+}
+
 /* The options of this command; 0 or 2. */
 static int read_options(struct listing *listing, const struct call *call)
 {
     static const char *const orders[] = {"lexicographic", "generated"};
     static const char *const statistics[] = {"multiplicity"};
     const struct token *limit = call_option(call, "--limit"), *order = call_option(call, "--order"),
-                       *distribution = call_option(call, "--distribution");
+                       *distribution = call_option(call, "--distribution"),
+                       *columns = call_option(call, "--columns");
     size_t chosen = 0, unused;
     listing->limit = UINT64_MAX;
     int code = counting_single(call, &listing->r);
@@ -225,11 +259,14 @@ static int read_options(struct listing *listing, const struct call *call)
         code = value_word(call, order, orders, 2, &chosen);
     if (!code && distribution)
         code = value_word(call, distribution, statistics, 1, &unused);
-    if (!code && distribution && (limit || order || listing->witness))
+    if (!code && distribution && (limit || order || listing->witness || columns))
         code = misuse_missing(call, "--distribution counts all results: leave out %s",
-                              limit   ? "--limit"
-                              : order ? "--order"
-                                      : "--witness");
+                              limit              ? "--limit"
+                              : order            ? "--order"
+                              : listing->witness ? "--witness"
+                                                 : "--columns");
+    if (!code && columns)
+        code = read_columns(listing, call, columns);
     listing->generated = chosen == 1;
     listing->distribution = distribution != NULL;
     return code;
@@ -237,27 +274,30 @@ static int read_options(struct listing *listing, const struct call *call)
 
 static int set_columns(struct listing *listing)
 {
-    struct slip_column columns[MOST] = {{"permutation", SLIP_CELL_TEXT},
-                                        {"r", SLIP_CELL_NUMBER},
-                                        {"result", SLIP_CELL_TEXT},
-                                        {"multiplicity", SLIP_CELL_BIG}};
-    if (listing->distribution) {
-        columns[RESULT] = (struct slip_column){"multiplicity", SLIP_CELL_BIG};
-        columns[MULTIPLICITY] = (struct slip_column){"results", SLIP_CELL_BIG};
+    static const struct slip_column counted[] = {{"permutation", SLIP_CELL_TEXT},
+                                                 {"r", SLIP_CELL_NUMBER},
+                                                 {"multiplicity", SLIP_CELL_BIG},
+                                                 {"results", SLIP_CELL_BIG},
+                                                 {"name", SLIP_CELL_TEXT}};
+    if (listing->distribution)
+        return batch_columns(listing->batch, counted, listing->batch->names ? 5 : 4);
+    if (!listing->count) { /* the usual ones */
+        for (size_t c = 0; c < MOST; c++)
+            if ((c != WITNESS || listing->witness) && (c != NAME || listing->batch->names))
+                listing->columns[listing->count++] = c;
+        listing->multiplicities = true;
     }
-    size_t count = MULTIPLICITY + 1;
-    if (listing->witness)
-        columns[count++] = (struct slip_column){"witness", SLIP_CELL_TEXT};
-    if (listing->batch->names)
-        columns[count++] = (struct slip_column){"name", SLIP_CELL_TEXT};
-    return batch_columns(listing->batch, columns, count);
+    struct slip_column columns[MOST];
+    for (size_t c = 0; c < listing->count; c++)
+        columns[c] = all[listing->columns[c]];
+    return batch_columns(listing->batch, columns, listing->count);
 }
 
 static int begin(struct listing *listing, const struct call *call)
 {
     int code = read_options(listing, call);
     if (!code)
-        code = batch_begin(listing->batch, call, 0, true);
+        code = batch_begin(listing->batch, call, 0, listing->count == 0);
     if (!code)
         code = counting_fits(call, listing->engine, listing->batch->source, listing->r);
     listing->batch->work.total = 0; /* rows are results here, and their number is not known */

@@ -102,3 +102,39 @@ int value_word(const struct call *call, const struct token *token, const char *c
     return misuse(call, token->index, token->offset, strlen(token->value), "%s is %s, not '%s'",
                   token->option->name, list, token->value);
 }
+
+static int unknown_word(const struct call *call, const struct token *token, const char *kind,
+                        const char *const *words, size_t count, size_t offset, size_t span)
+{
+    char text[40];
+    snprintf(text, sizeof text, "%.*s", (int)span, token->value + offset);
+    const char *near = span && span < sizeof text ? nearest(text, words, count) : NULL;
+    if (near)
+        return misuse(call, token->index, token->offset + offset, span,
+                      "there is no %s '%s': did you mean '%s'?", kind, text, near);
+    return misuse(call, token->index, token->offset + offset, span,
+                  "there is no %s '%s' (see --help for their names)", kind, text);
+}
+
+int value_list(const struct call *call, const struct token *token, const char *kind,
+               const char *const *words, size_t count, size_t *chosen, size_t *number)
+{
+    size_t offset = 0;
+    *number = 0;
+    for (;;) {
+        size_t span = strcspn(token->value + offset, ","), word = 0;
+        while (word < count &&
+               (strlen(words[word]) != span || memcmp(words[word], token->value + offset, span)))
+            word++;
+        if (word == count)
+            return unknown_word(call, token, kind, words, count, offset, span);
+        for (size_t i = 0; i < *number; i++)
+            if (chosen[i] == word)
+                return misuse(call, token->index, token->offset + offset, span,
+                              "%s '%s' is given twice", kind, words[word]);
+        chosen[(*number)++] = word;
+        offset += span;
+        if (!token->value[offset++])
+            return 0;
+    }
+}

@@ -26,4 +26,9 @@ int value_size(const struct call *call, const struct token *token, uint64_t *byt
 int value_word(const struct call *call, const struct token *token, const char *const *words,
                size_t count, size_t *chosen);
 
+/* Some of the words, each at most once, separated by commas; chosen has room for all of them.
+ * `kind` names what the words are ("column"). */
+int value_list(const struct call *call, const struct token *token, const char *kind,
+               const char *const *words, size_t count, size_t *chosen, size_t *number);
+
 #endif
