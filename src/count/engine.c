@@ -1,0 +1,21 @@
+#include "slipcase/engine.h"
+
+#include <string.h>
+
+static const struct slip_engine *const engines[] = {
+    &slip_engine_store,
+};
+
+const struct slip_engine *const *slip_engine_list(size_t *count)
+{
+    *count = sizeof engines / sizeof *engines;
+    return engines;
+}
+
+const struct slip_engine *slip_engine_find(const char *name)
+{
+    for (size_t i = 0; i < sizeof engines / sizeof *engines; i++)
+        if (strcmp(engines[i]->name, name) == 0)
+            return engines[i];
+    return NULL;
+}

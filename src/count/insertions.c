@@ -1,0 +1,75 @@
+#include "count/insertions.h"
+
+#include <string.h>
+
+void slip_insertions_begin(struct slip_insertions *insertions, const uint64_t *key, uint32_t length)
+{
+    insertions->length = length + 1;
+    insertions->words = slip_packed_words(length + 1);
+    insertions->value = length + 1;
+    if (insertions->words == 1) {
+        insertions->bumped = key[0];
+        for (uint32_t i = 0; i < length; i++)
+            insertions->place[(key[0] >> 4 * i & 15) + 1] = (unsigned char)i;
+        return;
+    }
+    for (uint32_t i = 0; i < length; i++) {
+        uint32_t value = slip_packed_element(key, length, i);
+        insertions->elements[i] = (unsigned char)value;
+        insertions->place[value] = (unsigned char)i;
+    }
+}
+
+/* The new element goes in at the right end and is exchanged with one left neighbour after the
+ * other: (x ^ v) on both nibbles exchanges x and v. */
+static void write_words(uint64_t *out, uint64_t bumped, uint64_t nibble, uint32_t length)
+{
+    uint64_t word = bumped << 4 | nibble;
+    out[0] = word;
+    for (uint32_t i = 1; i < length; i++) {
+        uint64_t both = ((bumped & 15) ^ nibble) * 0x11;
+        bumped >>= 4;
+        word ^= both << 4 * (i - 1);
+        out[i] = word;
+    }
+}
+
+static void write_bytes(uint64_t *out, const unsigned char *elements, unsigned char value,
+                        uint32_t length, uint32_t words)
+{
+    uint64_t row[(SLIP_PACKED_LONGEST + 7) / 8];
+    unsigned char *bytes = (unsigned char *)row;
+    row[words - 1] = 0; /* the padding */
+    memcpy(bytes, elements, length - 1);
+    bytes[length - 1] = value;
+    for (uint32_t i = length - 1;; i--) {
+        for (uint32_t w = 0; w < words; w++)
+            out[w] = row[w];
+        out += words;
+        if (i == 0)
+            return;
+        bytes[i] = bytes[i - 1];
+        bytes[i - 1] = value;
+    }
+}
+
+bool slip_insertions_next(struct slip_insertions *insertions, uint64_t *out)
+{
+    const uint32_t value = insertions->value;
+    if (value == 0)
+        return false;
+    /* The element that was `value` goes up now: every value from here on is at most that. */
+    const bool bumps = value < insertions->length;
+    if (insertions->words == 1) {
+        if (bumps)
+            insertions->bumped += (uint64_t)1 << 4 * insertions->place[value];
+        write_words(out, insertions->bumped, value - 1, insertions->length);
+    } else {
+        if (bumps)
+            insertions->elements[insertions->place[value]]++;
+        write_bytes(out, insertions->elements, (unsigned char)value, insertions->length,
+                    insertions->words);
+    }
+    insertions->value = value - 1;
+    return true;
+}

@@ -1,0 +1,249 @@
+#include "store/store_parts.h"
+
+#include "store/table.h"
+
+/* The key follows the entry in the arena. */
+struct slip_entry {
+    UT_hash_handle hh;
+    uint64_t weight;
+};
+
+enum { LEAST_LOG2 = 4, GREATEST_LOG2 = 31 }; /* buckets: uthash counts them with 32 bits */
+
+static size_t entry_bytes(uint32_t words)
+{
+    return sizeof(struct slip_entry) + words * sizeof(uint64_t);
+}
+
+static uint64_t *key_of(struct slip_entry *entry)
+{
+    return (uint64_t *)(entry + 1);
+}
+
+/* The least power of two with at most one entry a bucket. */
+static unsigned table_log2(double expected)
+{
+    unsigned log2 = LEAST_LOG2;
+    while (log2 < GREATEST_LOG2 && (double)((uint64_t)1 << log2) < expected)
+        log2++;
+    return log2;
+}
+
+/* What is held besides the arena and the buckets. */
+static uint64_t fixed_bytes(void)
+{
+    return sizeof(struct slip_store) + sizeof(struct slip_entry) + sizeof(UT_hash_table);
+}
+
+static uint64_t bucket_bytes(unsigned log2)
+{
+    return (uint64_t)sizeof(UT_hash_bucket) << log2;
+}
+
+double slip_store_estimate(uint32_t length, double expected)
+{
+    struct slip_arena arena;
+    slip_arena_init(&arena, entry_bytes(slip_packed_words(length)), expected);
+    return slip_arena_estimate(&arena, expected) + (double)bucket_bytes(table_log2(expected)) +
+           (double)fixed_bytes();
+}
+
+uint64_t slip_store_bytes(const struct slip_store *store)
+{
+    return slip_arena_bytes(&store->arena) + bucket_bytes(store->head->hh.tbl->log2_num_buckets) +
+           fixed_bytes();
+}
+
+uint64_t slip_store_size(const struct slip_store *store)
+{
+    return store->arena.used;
+}
+
+/* SLIP_LIMIT when `bytes` at once are more than this store may hold. */
+static slip_status afford(const struct slip_store *store, uint64_t bytes, struct slip_error *err)
+{
+    const struct slip_hooks limit = {.memory = store->memory};
+    return slip_hooks_afford(&limit, (double)bytes, "a set of permutations", err);
+}
+
+/* uthash makes a table for a first entry; ours is made before there is one. */
+static slip_status make_table(struct slip_store *store, struct slip_error *err)
+{
+    uint64_t bytes = bucket_bytes(store->first_log2) + sizeof(UT_hash_table);
+    slip_status status = afford(store, fixed_bytes() + bucket_bytes(store->first_log2), err);
+    if (status != SLIP_OK)
+        return status;
+    store->head = calloc(1, sizeof *store->head);
+    if (!store->head)
+        return slip_fail_memory(err, sizeof *store->head);
+    int failed = 0;
+    HASH_MAKE_TABLE(hh, store->head, failed);
+    if (failed) {
+        free(store->head);
+        return slip_fail_memory(err, bytes);
+    }
+    /* uthash would double the table as soon as one chain holds ten, which happens now and then in
+     * a large table at any load; we double it ourselves, when the load passes 1. */
+    store->head->hh.tbl->noexpand = 1;
+    return SLIP_OK;
+}
+
+slip_status slip_store_open(struct slip_store **out, uint32_t length, uint64_t expected,
+                            uint64_t memory, struct slip_error *err)
+{
+    *out = NULL;
+    if (length > SLIP_PACKED_LONGEST)
+        return slip_fail(err, SLIP_USAGE, "length %u, expected at most %d", length,
+                         SLIP_PACKED_LONGEST);
+    struct slip_store *store = calloc(1, sizeof *store);
+    if (!store)
+        return slip_fail_memory(err, sizeof *store);
+    store->length = length;
+    store->words = slip_packed_words(length);
+    store->first_log2 = table_log2((double)expected);
+    store->memory = memory;
+    store->most = UINT32_MAX;
+    slip_arena_init(&store->arena, entry_bytes(store->words), (double)expected);
+    slip_status status = make_table(store, err);
+    if (status == SLIP_OK)
+        *out = store;
+    else
+        free(store);
+    return status;
+}
+
+void slip_store_close(struct slip_store *store)
+{
+    if (!store)
+        return;
+    free(store->head->hh.tbl->buckets);
+    free(store->head->hh.tbl);
+    free(store->head);
+    slip_arena_clear(&store->arena);
+    free(store);
+}
+
+/* Doubles the table. */
+static slip_status widen(struct slip_store *store, struct slip_error *err)
+{
+    UT_hash_table *table = store->head->hh.tbl;
+    uint64_t more = bucket_bytes(table->log2_num_buckets + 1);
+    slip_status status = afford(store, slip_store_bytes(store) + more, err);
+    if (status != SLIP_OK)
+        return status;
+    int failed = 0;
+    HASH_EXPAND_BUCKETS(hh, table, failed);
+    return failed ? slip_fail_memory(err, more) : SLIP_OK;
+}
+
+/* Room for one more entry in arena and table. */
+static slip_status make_room(struct slip_store *store, struct slip_error *err)
+{
+    if (store->arena.used >= store->most)
+        return slip_fail(err, SLIP_LIMIT, "a set of permutations holds at most %llu of them",
+                         (unsigned long long)store->most);
+    const UT_hash_table *table = store->head->hh.tbl;
+    if (table->num_items == table->num_buckets && table->log2_num_buckets < GREATEST_LOG2) {
+        slip_status status = widen(store, err);
+        if (status != SLIP_OK)
+            return status;
+    }
+    if (!slip_arena_full(&store->arena))
+        return SLIP_OK;
+    uint64_t more = slip_arena_growth(&store->arena);
+    slip_status status = afford(store, slip_store_bytes(store) + more, err);
+    if (status == SLIP_OK && !slip_arena_reserve(&store->arena))
+        status = slip_fail_memory(err, more);
+    return status;
+}
+
+static inline slip_status add_new(struct slip_store *store, const uint64_t *key, uint32_t words,
+                                  unsigned hash, uint64_t weight, struct slip_error *err)
+{
+    slip_status status = make_room(store, err);
+    if (status != SLIP_OK)
+        return status;
+    struct slip_entry *entry = slip_arena_item(&store->arena, store->arena.used);
+    entry->weight = weight;
+    for (uint32_t i = 0; i < words; i++)
+        key_of(entry)[i] = key[i];
+    HASH_ADD_KEYPTR_BYHASHVALUE(hh, store->head, key_of(entry), 8 * words, hash, entry);
+    store->arena.used++;
+    return SLIP_OK;
+}
+
+static inline slip_status add_one(struct slip_store *store, const uint64_t *key, uint32_t words,
+                                  unsigned hash, uint64_t weight, struct slip_error *err)
+{
+    struct slip_entry *entry;
+    HASH_FIND_BYHASHVALUE(hh, store->head, key, 8 * words, hash, entry);
+    if (!entry)
+        return add_new(store, key, words, hash, weight, err);
+    if (__builtin_add_overflow(entry->weight, weight, &entry->weight))
+        return slip_fail(err, SLIP_LIMIT, "the weight of a permutation is beyond 64 bits");
+    return SLIP_OK;
+}
+
+/*
+ * Keys are looked up in runs, so that memory works on all of a run at once: first their buckets
+ * are asked for, then the first entry of each bucket, and only then are the keys looked up. The
+ * run is short enough for all of it to stay in the first-level cache.
+ */
+enum { RUN = 32 };
+
+static inline slip_status add_run(struct slip_store *store, const uint64_t *keys, size_t count,
+                                  uint32_t words, const uint64_t *weights, struct slip_error *err)
+{
+    unsigned hashes[RUN];
+    const UT_hash_table *table = store->head->hh.tbl;
+    const unsigned mask = table->num_buckets - 1;
+    for (size_t i = 0; i < count; i++) {
+        hashes[i] = slip_hash_words(keys + i * words, words);
+        __builtin_prefetch(&table->buckets[hashes[i] & mask]);
+    }
+    for (size_t i = 0; i < count; i++) {
+        const char *first = (const char *)table->buckets[hashes[i] & mask].hh_head;
+        if (first) {
+            __builtin_prefetch(first + offsetof(UT_hash_handle, hh_prev));
+            __builtin_prefetch(first + sizeof(struct slip_entry));
+        }
+    }
+    slip_status status = SLIP_OK;
+    for (size_t i = 0; i < count && status == SLIP_OK; i++)
+        status = add_one(store, keys + i * words, words, hashes[i], weights ? weights[i] : 1, err);
+    return status;
+}
+
+slip_status slip_store_add(struct slip_store *store, const uint64_t *keys, size_t count,
+                           const uint64_t *weights, struct slip_error *err)
+{
+    slip_status status = SLIP_OK;
+    const uint32_t words = store->words;
+    while (count && status == SLIP_OK) {
+        size_t run = count < RUN ? count : RUN;
+        /* The commonest size is compiled apart, as straight-line code. */
+        status = words == 1 ? add_run(store, keys, run, 1, weights, err)
+                            : add_run(store, keys, run, words, weights, err);
+        keys += run * words;
+        weights = weights ? weights + run : NULL;
+        count -= run;
+    }
+    return status;
+}
+
+bool slip_store_find(const struct slip_store *store, const uint64_t *key, uint64_t *weight)
+{
+    const struct slip_entry *entry;
+    HASH_FIND(hh, store->head, key, 8 * store->words, entry);
+    if (weight)
+        *weight = entry ? entry->weight : 0;
+    return entry != NULL;
+}
+
+const uint64_t *slip_store_entry(const struct slip_store *store, uint64_t i, uint64_t *weight)
+{
+    struct slip_entry *entry = slip_arena_item(&store->arena, i);
+    if (weight)
+        *weight = entry->weight;
+    return key_of(entry);
+}
