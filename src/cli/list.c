@@ -153,7 +153,7 @@ static slip_status list_sorted(struct listing *listing, const struct slip_engine
     struct slip_results results;
     slip_results_init(&results);
     slip_status status = slip_results_collect(&results, engine, &listing->item->perm, listing->r,
-                                              listing->multiplicity, hooks, err);
+                                              listing->multiplicities, hooks, err);
     for (uint64_t i = 0; status == SLIP_OK && i < results.count && i < listing->limit; i++) {
         if (i % 4096 == 0)
             status = slip_hooks_poll(hooks, err);
