@@ -41,6 +41,7 @@ struct counting {
     struct slip_item items[CHUNK];
     size_t held;
     const struct slip_item *showing; /* the item of the row that is being shown */
+    const struct slip_row *end;      /* of the rows that are being counted */
     struct slip_text cells[COLUMNS_MOST];
 };
 
@@ -113,7 +114,8 @@ static slip_status row_done(void *context, struct slip_row *row, struct slip_err
     if (status == SLIP_OK) {
         counting->batch->work.rows++;
         counting->batch->work.results += mpz_get_d(row->distinct);
-        work_label(&counting->batch->work, row->perm, row->r);
+        if (row + 1 < counting->end)
+            work_label(&counting->batch->work, row[1].perm, row[1].r);
     }
     return status;
 }
@@ -131,6 +133,7 @@ static slip_status count_held(struct counting *counting, struct slip_error *err)
         slip_row_init(&rows[i], &counting->items[i / each].perm,
                       counting->r.from + (uint32_t)(i % each));
     counting->showing = counting->items;
+    counting->end = rows + count;
     work_label(&counting->batch->work, rows[0].perm, rows[0].r);
     size_t failed = count;
     slip_status status = slip_rows_count(rows, count, counting->engine, row_done, counting,
