@@ -3,6 +3,7 @@
 #include <stdio.h>
 #include <string.h>
 
+SLIP_PRINTF(3, 0)
 static slip_status fill(struct slip_error *err, slip_status status, const char *format,
                         va_list arguments)
 {
