@@ -4,29 +4,10 @@
 #include <stdlib.h>
 #include <unistd.h>
 
-#include "slipcase/text.h"
+#include "core/unnamed.h"
 #include "source/lines.h"
 
 static const char purpose[] = "cannot copy it to a temporary file";
-
-/* Nobody else can see the file: its name is gone as soon as it is there. */
-static slip_status open_unnamed(int *fd, struct slip_error *err)
-{
-    const char *folder = getenv("TMPDIR");
-    struct slip_text path;
-    slip_text_init(&path);
-    slip_text_format(&path, "%s/slipcase-XXXXXX", folder && *folder ? folder : "/tmp");
-    slip_status status = slip_text_ok(&path, err);
-    if (status == SLIP_OK) {
-        *fd = mkstemp(path.data);
-        if (*fd < 0)
-            status = slip_lines_fail(err, purpose, errno);
-        else
-            unlink(path.data);
-    }
-    slip_text_clear(&path);
-    return status;
-}
 
 static slip_status write_all(int fd, const char *bytes, size_t count, struct slip_error *err)
 {
@@ -63,7 +44,7 @@ static slip_status copy_all(int to, int from, struct slip_error *err)
 
 slip_status slip_spool(int *copy, int from, struct slip_error *err)
 {
-    slip_status status = open_unnamed(copy, err);
+    slip_status status = slip_unnamed_open(copy, purpose, err);
     if (status != SLIP_OK)
         return status;
     status = copy_all(*copy, from, err);
