@@ -61,8 +61,9 @@ static void show(void *context, double done, double all)
                          work->results / (now - work->begun));
     if (work->label[0])
         used += snprintf(line + used, sizeof line - (size_t)used, "; now %s", work->label);
-    if (all > 0)
-        used += snprintf(line + used, sizeof line - (size_t)used, " %.0f %%", 100 * done / all);
+    if (all > 0 && done > 0)
+        used += snprintf(line + used, sizeof line - (size_t)used, " %.0f %%, about %.0f s left",
+                         100 * done / all, (now - work->row_begun) * (all - done) / done);
     unsigned width = terminal_width() - 1;
     fprintf(stderr, "\r%.*s\033[K", (int)width, line);
     fflush(stderr);
@@ -73,7 +74,7 @@ int work_begin(struct work *work, const struct call *call)
 {
     *work = (struct work){.hooks = {.interrupted = interrupted, .progress = show}};
     work->hooks.context = work;
-    work->begun = work->last = clock_now();
+    work->begun = work->row_begun = work->last = clock_now();
     work->shows = isatty(STDERR_FILENO) && !call_flag(call, "--quiet");
     const struct token *memory = call_option(call, "--memory");
     const struct token *threads = call_option(call, "--threads");
@@ -102,6 +103,7 @@ void work_label(struct work *work, const struct slip_perm *perm, unsigned r)
              : used >= 40 ? " ..."
                           : "",
              r);
+    work->row_begun = clock_now();
     show(work, 0, 0);
 }
 

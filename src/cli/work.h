@@ -14,12 +14,12 @@ extern const struct option_group work_options;
 
 struct work {
     struct slip_hooks hooks;
-    bool shows;         /* progress is wanted */
-    bool shown;         /* a progress line stands on the terminal */
-    double begun, last; /* times */
-    double rows, total; /* rows done; rows in all, 0 when unknown */
-    double results;     /* results counted so far */
-    char label[64];     /* the current permutation */
+    bool shows;                    /* progress is wanted */
+    bool shown;                    /* a progress line stands on the terminal */
+    double begun, row_begun, last; /* times */
+    double rows, total;            /* rows done; rows in all, 0 when unknown */
+    double results;                /* results counted so far */
+    char label[64];                /* the current permutation */
 };
 
 /* Reads --memory and --threads and sets the signal handlers; 0, or the exit code after a message.
