@@ -1,5 +1,6 @@
 #include <string.h>
 
+#include "core/chars.h"
 #include "fit/terms.h"
 
 /* What is being read. */
@@ -15,13 +16,8 @@ static char look(const struct cursor *c)
 
 static void skip_blanks(struct cursor *c)
 {
-    while (look(c) == ' ' || look(c) == '\t')
+    while (slip_is_blank(look(c)))
         c->at++;
-}
-
-static bool is_digit(char c)
-{
-    return c >= '0' && c <= '9';
 }
 
 static slip_status expected(const struct cursor *c, const char *what, struct slip_error *err)
@@ -34,7 +30,7 @@ static slip_status read_power(struct cursor *c, uint32_t *power, struct slip_err
 {
     size_t from = c->at;
     *power = 0;
-    while (is_digit(look(c)) && *power <= SLIP_POWER_MOST)
+    while (slip_is_digit(look(c)) && *power <= SLIP_POWER_MOST)
         *power = *power * 10 + (uint32_t)(c->text[c->at++] - '0');
     if (*power >= 1 && *power <= SLIP_POWER_MOST)
         return SLIP_OK;
@@ -49,12 +45,12 @@ static slip_status read_factor(struct slip_term *term, struct slip_variables *va
     size_t from = c->at, index;
     if (look(c) == '1') {
         c->at++;
-        if (is_digit(look(c)))
+        if (slip_is_digit(look(c)))
             return slip_fail_at(err, SLIP_USAGE, from + 1, 2,
                                 "a term has no coefficient: 1 is the only number in it");
         return SLIP_OK;
     }
-    if (is_digit(look(c)))
+    if (slip_is_digit(look(c)))
         return slip_fail_at(err, SLIP_USAGE, from + 1, 1,
                             "a term has no coefficient: 1 is the only number in it");
     size_t extent = slip_statistic_extent(c->text + c->at, c->length - c->at);

@@ -1,6 +1,7 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "core/chars.h"
 #include "slipcase/term.h"
 
 void slip_variables_init(struct slip_variables *variables)
@@ -78,18 +79,13 @@ static slip_status read_variable(struct slip_variable *variable, const char *tex
     return status;
 }
 
-static bool is_blank(char c)
-{
-    return c == ' ' || c == '\t';
-}
-
 slip_status slip_variables_parse(struct slip_variables *variables, size_t *index, const char *text,
                                  size_t length, struct slip_error *err)
 {
     size_t from = 0;
-    while (from < length && is_blank(text[from]))
+    while (from < length && slip_is_blank(text[from]))
         from++;
-    while (length > from && is_blank(text[length - 1]))
+    while (length > from && slip_is_blank(text[length - 1]))
         length--;
     if (from == length)
         return slip_fail_at(err, SLIP_USAGE, from + 1, 1, "expected n, a statistic or param(NAME)");

@@ -1,10 +1,7 @@
 /* A file of permutations, one a line. */
 #include <errno.h>
-#include <fcntl.h>
-#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
-#include <sys/stat.h>
 #include <unistd.h>
 
 #include "core/chars.h"
@@ -31,13 +28,8 @@ struct content {
 /* Puts the file's name into err, its last part if it is long. */
 static slip_status locate(const struct file_part *file, slip_status status, struct slip_error *err)
 {
-    if (status != SLIP_OK && err) {
-        size_t length = strlen(file->path), room = sizeof err->file - 1;
-        if (length <= room)
-            memcpy(err->file, file->path, length + 1);
-        else
-            snprintf(err->file, sizeof err->file, "...%s", file->path + length - (room - 3));
-    }
+    if (status != SLIP_OK)
+        slip_lines_locate(err, file->path);
     return status;
 }
 
@@ -144,19 +136,9 @@ static slip_status file_next(struct slip_part *part, struct slip_item *item, boo
 
 static slip_status open_path(struct file_part *file, struct slip_error *err)
 {
-    int fd = STDIN_FILENO;
-    if (strcmp(file->path, "-") != 0)
-        fd = open(file->path, O_RDONLY | O_CLOEXEC);
-    if (fd < 0)
-        return slip_lines_fail(err, "cannot open", errno);
-    file->lines.fd = fd;
-    file->is_open = true;
-    struct stat about;
-    if (fstat(fd, &about) != 0)
-        return slip_lines_fail(err, "cannot read", errno);
-    if (S_ISDIR(about.st_mode))
-        return slip_fail(err, SLIP_IO, "is a directory, expected a file of permutations");
-    return SLIP_OK;
+    slip_status status = slip_lines_open(&file->lines, file->path, "a file of permutations", err);
+    file->is_open = status == SLIP_OK;
+    return status;
 }
 
 static slip_status file_open(struct slip_part *part, struct slip_error *err)

@@ -1,8 +1,11 @@
 #include "source/lines.h"
 
 #include <errno.h>
+#include <fcntl.h>
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
+#include <sys/stat.h>
 #include <unistd.h>
 
 /* A line beyond this is no list of elements, but a device or a binary file. */
@@ -12,6 +15,26 @@ void slip_lines_init(struct slip_lines *lines, int fd)
 {
     *lines = (struct slip_lines){.fd = fd, .longest = longest_line};
     slip_text_init(&lines->text);
+}
+
+slip_status slip_lines_open(struct slip_lines *lines, const char *path, const char *expected,
+                            struct slip_error *err)
+{
+    bool standard_input = strcmp(path, "-") == 0;
+    int fd = standard_input ? STDIN_FILENO : open(path, O_RDONLY | O_CLOEXEC);
+    if (fd < 0)
+        return slip_lines_fail(err, "cannot open", errno);
+    struct stat about;
+    slip_status status = SLIP_OK;
+    if (fstat(fd, &about) != 0)
+        status = slip_lines_fail(err, "cannot read", errno);
+    else if (S_ISDIR(about.st_mode))
+        status = slip_fail(err, SLIP_IO, "is a directory, expected %s", expected);
+    if (status == SLIP_OK)
+        lines->fd = fd;
+    else if (!standard_input)
+        close(fd);
+    return status;
 }
 
 void slip_lines_clear(struct slip_lines *lines)
@@ -34,6 +57,17 @@ slip_status slip_lines_fail(struct slip_error *err, const char *what, int number
     if (strerror_r(number, reason, sizeof reason) != 0)
         reason[0] = '\0';
     return slip_fail(err, SLIP_IO, "%s: %s", what, reason[0] ? reason : "unknown error");
+}
+
+void slip_lines_locate(struct slip_error *err, const char *path)
+{
+    if (!err)
+        return;
+    size_t length = strlen(path), room = sizeof err->file - 1;
+    if (length <= room)
+        memcpy(err->file, path, length + 1);
+    else
+        snprintf(err->file, sizeof err->file, "...%s", path + length - (room - 3));
 }
 
 static slip_status fill(struct slip_lines *lines, struct slip_error *err)

@@ -23,6 +23,11 @@ struct slip_lines {
 void slip_lines_init(struct slip_lines *lines, int fd);
 void slip_lines_clear(struct slip_lines *lines); /* idempotent */
 
+/* Opens the path for reading, "-" being standard input, and makes it the descriptor to read from;
+ * `expected` says what it should be, for when it is a directory. SLIP_IO, without the file. */
+slip_status slip_lines_open(struct slip_lines *lines, const char *path, const char *expected,
+                            struct slip_error *err);
+
 /* Forgets what was read: the next line is the one at fd's position, and has number 1. */
 void slip_lines_restart(struct slip_lines *lines);
 
@@ -35,5 +40,8 @@ slip_status slip_lines_next(struct slip_lines *lines, bool *more, struct slip_er
 
 /* Fills err with SLIP_IO and "<what>: <reason>", the reason being that of an errno value. */
 slip_status slip_lines_fail(struct slip_error *err, const char *what, int number);
+
+/* Names the file in err (when not NULL): the end of a path that is too long. */
+void slip_lines_locate(struct slip_error *err, const char *path);
 
 #endif
