@@ -28,6 +28,9 @@ SLIP_API void slip_family_free(struct slip_family *family); /* NULL is allowed *
 SLIP_API size_t slip_family_parameter_count(const struct slip_family *family);
 SLIP_API const char *slip_family_parameter(const struct slip_family *family, size_t i);
 
+/* The column (from 1) at which parameter i appears first. */
+SLIP_API uint64_t slip_family_parameter_column(const struct slip_family *family, size_t i);
+
 /*
  * The length of the permutation for these values of the parameters (in the order above; NULL when
  * there are none), without building anything. Errors have the column of what is at fault:
@@ -44,6 +47,14 @@ SLIP_API slip_status slip_family_length(uint32_t *length, const struct slip_fami
 SLIP_API slip_status slip_family_build(struct slip_perm *p, const struct slip_family *family,
                                        const int64_t *values, const struct slip_hooks *hooks,
                                        struct slip_error *err);
+
+/*
+ * A permutation as people give one in an argument: an expression without parameters when the text
+ * begins with '=', else as slip_perm_parse reads it. Errors of both, with columns within the
+ * text; SLIP_USAGE for a parameter. p is unchanged on failure.
+ */
+SLIP_API slip_status slip_family_argument(struct slip_perm *p, const char *text, size_t length,
+                                          const struct slip_hooks *hooks, struct slip_error *err);
 
 /* ---- values of parameters ---- */
 

@@ -6,10 +6,17 @@
  * in the order in which they were added, never more than one permutation in memory.
  */
 
+#include "slipcase/family.h"
 #include "slipcase/hooks.h"
 #include "slipcase/perm.h"
 
 struct slip_source;
+
+/* A parameter of a family and its value. */
+struct slip_parameter {
+    const char *name; /* owned by the source */
+    int64_t value;
+};
 
 /* One permutation and what is known of it. Owned by the caller, reused from call to call. */
 struct slip_item {
@@ -19,6 +26,9 @@ struct slip_item {
                               by the source */
     uint64_t line;         /* in that file, from 1; 0 if none */
     bool is_class;         /* it stands for its whole class under the eight symmetries */
+    /* What it was built with, when it comes from a family; names differ. */
+    struct slip_parameter parameters[SLIP_FAMILY_PARAMETERS];
+    size_t parameter_count;
 };
 
 SLIP_API void slip_item_init(struct slip_item *item);
@@ -27,7 +37,8 @@ SLIP_API void slip_item_clear(struct slip_item *item); /* idempotent */
 SLIP_API slip_status slip_source_new(struct slip_source **source, struct slip_error *err);
 SLIP_API void slip_source_free(struct slip_source *source); /* NULL is allowed */
 
-/* Adds one permutation given as text; SLIP_DATA with the column when it is not one. */
+/* Adds one permutation given as text, or as '=' and an expression without parameters. Errors as
+ * slip_family_argument. */
 SLIP_API slip_status slip_source_add_text(struct slip_source *source, const char *text,
                                           struct slip_error *err);
 /* Adds a file by its path, "-" for standard input (at most once: SLIP_USAGE). Not opened yet.
@@ -47,6 +58,29 @@ SLIP_API slip_status slip_source_add_classes(struct slip_source *source, uint32_
 SLIP_API slip_status slip_source_add_random(struct slip_source *source, uint64_t count,
                                             uint32_t from, uint32_t to, uint64_t seed,
                                             struct slip_error *err);
+
+/* Adds all layered permutations (direct sums of falling runs) of length from..to, in lexicographic
+ * order: 2^(n-1) of each length n >= 1. */
+SLIP_API slip_status slip_source_add_layered(struct slip_source *source, uint32_t from, uint32_t to,
+                                             struct slip_error *err);
+/* Adds all simple permutations (without intervals but the single elements and the whole) of length
+ * from..to, in lexicographic order. */
+SLIP_API slip_status slip_source_add_simple(struct slip_source *source, uint32_t from, uint32_t to,
+                                            struct slip_error *err);
+/*
+ * Adds the permutations of a family (slipcase/family.h), one for each combination of the values
+ * of its parameters; the first binding changes slowest. Each parameter must have exactly one
+ * binding. SLIP_USAGE or SLIP_LIMIT, with the column in the text where that is what is wrong, also
+ * when one of the first million combinations, or the last, cannot be built; a later one fails in
+ * slip_source_next.
+ */
+SLIP_API slip_status slip_source_add_family(struct slip_source *source, const char *text,
+                                            const struct slip_binding *bindings, size_t count,
+                                            struct slip_error *err);
+
+/* The names of all parameters of the families added, each once, in order of first appearance in
+ * their bindings; owned by the source. */
+SLIP_API const char *const *slip_source_parameters(const struct slip_source *source, size_t *count);
 
 /* The number of sources added. */
 SLIP_API size_t slip_source_count(const struct slip_source *source);

@@ -4,6 +4,8 @@
 /* Bytes of input text, the same in every locale. */
 
 #include <stdbool.h>
+#include <stddef.h>
+#include <stdint.h>
 
 static inline bool slip_is_blank(char c)
 {
@@ -14,5 +16,18 @@ static inline bool slip_is_digit(char c)
 {
     return c >= '0' && c <= '9';
 }
+
+static inline bool slip_is_letter(char c)
+{
+    return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
+}
+
+/* The bytes of the UTF-8 character at the beginning of the text (length >= 1), 1 for anything that
+ * is not one. */
+uint32_t slip_char_span(const char *text, size_t length);
+
+/* That character as a message shows it: in quotes, or as a byte when it cannot be shown (control
+ * characters, invalid UTF-8). */
+void slip_char_show(char shown[16], const char *text, size_t length);
 
 #endif

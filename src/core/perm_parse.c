@@ -1,5 +1,4 @@
 /* Reading one permutation from text: the grammar is in the README. */
-#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 
@@ -22,33 +21,6 @@ static void trim(struct reader *r)
         r->from++;
     while (r->to > r->from && slip_is_blank(r->text[r->to - 1]))
         r->to--;
-}
-
-/* The bytes of the UTF-8 character at offset i, 1 for anything that is not one. */
-static uint32_t character(const struct reader *r, size_t i)
-{
-    const unsigned char *at = (const unsigned char *)r->text + i;
-    uint32_t span = *at >= 0xF0 ? 4 : *at >= 0xE0 ? 3 : *at >= 0xC2 ? 2 : 1;
-    if (*at > 0xF4 || span > r->to - i)
-        return 1;
-    for (uint32_t k = 1; k < span; k++)
-        if ((at[k] & 0xC0) != 0x80)
-            return 1;
-    return span;
-}
-
-/* The character at offset i as a message shows it: in quotes, or as a byte when it cannot be
- * shown (control characters, invalid UTF-8). */
-static void show(char shown[16], const struct reader *r, size_t i)
-{
-    uint32_t span = character(r, i);
-    unsigned char first = (unsigned char)r->text[i];
-    bool printable = span == 1 ? first >= ' ' && first < 0x7F
-                               : first != 0xC2 || (unsigned char)r->text[i + 1] >= 0xA0;
-    if (printable)
-        snprintf(shown, 16, "'%.*s'", (int)span, r->text + i);
-    else
-        snprintf(shown, 16, "byte 0x%02X", first);
 }
 
 static slip_status strip_brackets(struct reader *r)
@@ -98,8 +70,9 @@ static slip_status read_number(struct reader *r, size_t *at)
     size_t digits = *at - start;
     if (digits == 0) {
         char shown[16];
-        show(shown, r, start);
-        return slip_fail_at(r->err, SLIP_DATA, start + 1, character(r, start),
+        slip_char_show(shown, r->text + start, r->to - start);
+        return slip_fail_at(r->err, SLIP_DATA, start + 1,
+                            slip_char_span(r->text + start, r->to - start),
                             "%s is not a number, expected an element (1, 2, 3, ...)", shown);
     }
     uint32_t span = digits > UINT32_MAX ? UINT32_MAX : (uint32_t)digits;
@@ -131,8 +104,8 @@ static slip_status read_separated(struct reader *r)
                 return slip_fail_at(r->err, SLIP_DATA, at + 1, 1, "expected an element after ','");
         } else if (at < r->to && at == after) {
             char shown[16];
-            show(shown, r, at);
-            return slip_fail_at(r->err, SLIP_DATA, at + 1, character(r, at),
+            slip_char_show(shown, r->text + at, r->to - at);
+            return slip_fail_at(r->err, SLIP_DATA, at + 1, slip_char_span(r->text + at, r->to - at),
                                 "%s is not part of a number, expected a blank or a comma", shown);
         }
     }

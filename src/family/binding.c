@@ -18,11 +18,11 @@ static slip_status expected(const struct reader *r, const char *what)
 {
     if (r->at == r->length)
         return slip_fail_at(r->err, SLIP_USAGE, r->at + 1, 1, "expected %s, found the end", what);
-    unsigned char c = (unsigned char)r->text[r->at];
-    if (c < ' ' || c >= 127)
-        return slip_fail_at(r->err, SLIP_USAGE, r->at + 1, 1, "expected %s, found the byte 0x%02X",
-                            what, c);
-    return slip_fail_at(r->err, SLIP_USAGE, r->at + 1, 1, "expected %s, found '%c'", what, c);
+    char shown[16];
+    slip_char_show(shown, r->text + r->at, r->length - r->at);
+    return slip_fail_at(r->err, SLIP_USAGE, r->at + 1,
+                        slip_char_span(r->text + r->at, r->length - r->at), "expected %s, found %s",
+                        what, shown);
 }
 
 static slip_status read_integer(struct reader *r, int64_t *value)
@@ -79,18 +79,13 @@ slip_status slip_binding_parse_values(struct slip_binding *binding, const char *
     return read_values(&r, binding);
 }
 
-static bool is_letter(char c)
-{
-    return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
-}
-
 slip_status slip_binding_parse(struct slip_binding *binding, const char *text, size_t length,
                                struct slip_error *err)
 {
     struct reader r = {text, 0, length, err};
     skip_blanks(&r);
     size_t from = r.at;
-    while (r.at < length && (is_letter(text[r.at]) ||
+    while (r.at < length && (slip_is_letter(text[r.at]) ||
                              (r.at > from && (slip_is_digit(text[r.at]) || text[r.at] == '_'))))
         r.at++;
     if (r.at == from)

@@ -1,8 +1,8 @@
 #include "family/family.h"
 
 #include <stdlib.h>
-#include <string.h>
 
+#include "core/chars.h"
 #include "family/lexer.h"
 
 static slip_status copy_text(struct slip_family *family, const char *text, size_t length,
@@ -11,8 +11,8 @@ static slip_status copy_text(struct slip_family *family, const char *text, size_
     family->text = malloc(length + 1);
     if (!family->text)
         return slip_fail_memory(err, length + 1);
-    if (length)
-        memcpy(family->text, text, length);
+    for (size_t i = 0; i < length; i++) /* tabs and the like: messages quote from this text */
+        family->text[i] = slip_is_blank(text[i]) ? ' ' : text[i];
     family->text[length] = '\0';
     family->length = length;
     return SLIP_OK;
@@ -66,4 +66,15 @@ size_t slip_family_parameter_count(const struct slip_family *family)
 const char *slip_family_parameter(const struct slip_family *family, size_t i)
 {
     return family->parameters[i];
+}
+
+uint64_t slip_family_parameter_column(const struct slip_family *family, size_t i)
+{
+    size_t first = family->length;
+    for (uint32_t n = 0; n < family->count; n++) {
+        const struct node *node = &family->nodes[n];
+        if (node->kind == NODE_PARAMETER && node->index == i && node->from < first)
+            first = node->from;
+    }
+    return (uint64_t)first + 1;
 }

@@ -9,16 +9,11 @@ char lexer_peek(const struct lexer *l)
     return l->at < l->family->length ? l->family->text[l->at] : '\0';
 }
 
-static bool is_letter(char c)
-{
-    return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
-}
-
 size_t lexer_name(const struct lexer *l)
 {
     const char *text = l->family->text; /* ends with a NUL, which is no part of a name */
     size_t i = l->at;
-    while (is_letter(text[i]) || (i > l->at && (slip_is_digit(text[i]) || text[i] == '_')))
+    while (slip_is_letter(text[i]) || (i > l->at && (slip_is_digit(text[i]) || text[i] == '_')))
         i++;
     return i - l->at;
 }
@@ -47,31 +42,20 @@ bool lexer_accept(struct lexer *l, char c)
     return true;
 }
 
-/* The bytes of the token that begins here: a name, a number, or one UTF-8 character. */
-static size_t token_length(const struct lexer *l)
-{
-    size_t length = lexer_name(l) + lexer_number(l); /* one of them is 0 */
-    if (length)
-        return length;
-    const unsigned char *text = (const unsigned char *)l->family->text + l->at;
-    length = 1;
-    while (text[0] >= 0xC0 && length < 4 && (text[length] & 0xC0) == 0x80)
-        length++;
-    return length;
-}
-
 slip_status lexer_expected(const struct lexer *l, const char *what)
 {
     if (l->at == l->family->length)
         return slip_fail_at(l->err, SLIP_USAGE, l->at + 1, 1, "expected %s, found the end", what);
-    size_t length = token_length(l);
-    unsigned char first = (unsigned char)l->family->text[l->at];
-    if (first < ' ' || first == 127 || (first >= 0x80 && length == 1))
-        return slip_fail_at(l->err, SLIP_USAGE, l->at + 1, 1, "expected %s, found the byte 0x%02X",
-                            what, first);
-    return slip_fail_at(l->err, SLIP_USAGE, l->at + 1, length > 1000 ? 1000 : (uint32_t)length,
-                        "expected %s, found '%.*s'", what, length > 60 ? 60 : (int)length,
-                        l->family->text + l->at);
+    const char *text = l->family->text + l->at;
+    size_t word = lexer_name(l) + lexer_number(l); /* one of them is 0 */
+    if (word)
+        return slip_fail_at(l->err, SLIP_USAGE, l->at + 1, word > 1000 ? 1000 : (uint32_t)word,
+                            "expected %s, found '%.*s'", what, word > 60 ? 60 : (int)word, text);
+    char shown[16];
+    size_t left = l->family->length - l->at;
+    slip_char_show(shown, text, left);
+    return slip_fail_at(l->err, SLIP_USAGE, l->at + 1, slip_char_span(text, left),
+                        "expected %s, found %s", what, shown);
 }
 
 slip_status lexer_enter(struct lexer *l)

@@ -12,7 +12,8 @@
 struct slip_part;
 
 struct slip_part_kind {
-    /* The next permutation; item comes in without name, file, line and class. */
+    /* The next permutation; item comes in without name, file, line, class and
+     * parameters. */
     slip_status (*next)(struct slip_part *part, struct slip_item *item, bool *more,
                         struct slip_error *err);
     /* How many permutations in all, 0 when that is not known; NULL: never known. */
@@ -36,6 +37,8 @@ struct slip_source {
     size_t at; /* the part that is being read */
     bool opened;
     bool reads_standard_input;
+    const char **parameters; /* names, each once; the strings are the parts' */
+    size_t parameter_count;
 };
 
 /* Appends the part, which the source owns from here on: it is released at once on failure. */
@@ -44,6 +47,11 @@ slip_status slip_source_push(struct slip_source *source, struct slip_part *part,
 
 /* A zeroed part of this kind, in `bytes` bytes; NULL (and the error) without memory. */
 void *slip_part_new(const struct slip_part_kind *kind, size_t bytes, struct slip_error *err);
+
+/* Enters the name of a parameter, unless it is known; the string must live as long as the source.
+ */
+slip_status slip_source_name_parameter(struct slip_source *source, const char *name,
+                                       struct slip_error *err);
 
 /* SLIP_USAGE unless from <= to. */
 slip_status slip_part_check_range(uint32_t from, uint32_t to, struct slip_error *err);

@@ -1,6 +1,7 @@
 /* The list of parts; what each kind of part does is in the file of that kind. */
 #include <math.h>
 #include <stdlib.h>
+#include <string.h>
 
 #include "source/part.h"
 
@@ -31,6 +32,7 @@ void slip_source_free(struct slip_source *source)
     for (size_t i = 0; i < source->count; i++)
         source->parts[i]->kind->free(source->parts[i]);
     free(source->parts);
+    free(source->parameters);
     free(source);
 }
 
@@ -75,6 +77,27 @@ slip_status slip_source_push(struct slip_source *source, struct slip_part *part,
     else
         part->kind->free(part);
     return status;
+}
+
+slip_status slip_source_name_parameter(struct slip_source *source, const char *name,
+                                       struct slip_error *err)
+{
+    for (size_t i = 0; i < source->parameter_count; i++)
+        if (!strcmp(source->parameters[i], name))
+            return SLIP_OK;
+    size_t bytes = (source->parameter_count + 1) * sizeof *source->parameters;
+    const char **parameters = realloc(source->parameters, bytes);
+    if (!parameters)
+        return slip_fail_memory(err, bytes);
+    source->parameters = parameters;
+    parameters[source->parameter_count++] = name;
+    return SLIP_OK;
+}
+
+const char *const *slip_source_parameters(const struct slip_source *source, size_t *count)
+{
+    *count = source->parameter_count;
+    return source->parameters;
 }
 
 size_t slip_source_count(const struct slip_source *source)
@@ -142,6 +165,7 @@ slip_status slip_source_next(struct slip_source *source, struct slip_item *item,
         item->file = NULL;
         item->line = 0;
         item->is_class = false;
+        item->parameter_count = 0;
         struct slip_part *part = source->parts[source->at];
         slip_status status = part->kind->next(part, item, more, err);
         if (status != SLIP_OK || *more)

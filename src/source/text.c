@@ -1,4 +1,4 @@
-/* One permutation, given as text. */
+/* One permutation, given as text or as an expression. */
 #include <stdlib.h>
 #include <string.h>
 
@@ -44,7 +44,7 @@ slip_status slip_source_add_text(struct slip_source *source, const char *text,
     if (!part)
         return SLIP_LIMIT;
     slip_perm_init(&part->perm);
-    slip_status status = slip_perm_parse(&part->perm, text, strlen(text), err);
+    slip_status status = slip_family_argument(&part->perm, text, strlen(text), NULL, err);
     if (status != SLIP_OK) {
         text_free(&part->part);
         return status;

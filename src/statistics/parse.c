@@ -27,15 +27,11 @@ void slip_statistic_clear(struct slip_statistic *s)
     slip_statistic_init(s);
 }
 
-static bool is_letter(char c)
-{
-    return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
-}
-
 static size_t name_extent(const char *text, size_t length)
 {
     size_t i = 0;
-    while (i < length && (is_letter(text[i]) || (i && (slip_is_digit(text[i]) || text[i] == '_'))))
+    while (i < length &&
+           (slip_is_letter(text[i]) || (i && (slip_is_digit(text[i]) || text[i] == '_'))))
         i++;
     return i;
 }
@@ -105,8 +101,7 @@ static slip_status read_size(struct slip_statistic *s, struct reader *r)
         size = 10 * size + (uint64_t)(r->text[i] - '0');
     if (i < r->to || size < 1 || size > UINT32_MAX)
         return slip_fail_at(r->err, SLIP_USAGE, r->from + 1, span(r),
-                            "'%.*s' is not a size, expected an integer from 1 to %u",
-                            shown(r->to - r->from), r->text + r->from, UINT32_MAX);
+                            "this is not a size, expected an integer from 1 to %u", UINT32_MAX);
     s->size = (uint32_t)size;
     return SLIP_OK;
 }
