@@ -74,8 +74,8 @@ static int run(struct call *call)
     if (!token)
         return misuse_missing(call, "no pattern given: slipcase contains PATTERN [permutations]");
     int code = batch_begin(&batch, call, 1, true);
-    if (!code &&
-        slip_perm_parse(&searching.pattern, token->value, strlen(token->value), &err) != SLIP_OK)
+    if (!code && slip_family_argument(&searching.pattern, token->value, strlen(token->value),
+                                      &batch.work.hooks, &err) != SLIP_OK)
         code = complain_token(call, token, &err);
     mpz_init(searching.occurrences);
     slip_perm_write(&searching.pattern_text, &searching.pattern);

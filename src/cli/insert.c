@@ -6,6 +6,7 @@
 #include "cli/marked.h"
 #include "cli/message.h"
 #include "cli/output.h"
+#include "slipcase/family.h"
 #include "slipcase/insertion.h"
 
 static const struct option_group *const groups[] = {&output_options, NULL};
@@ -66,7 +67,7 @@ static int read_arguments(const struct call *call, struct slip_perm *p,
             continue;
         if (!first) {
             first = token;
-            if (slip_perm_parse(p, token->value, strlen(token->value), &err) != SLIP_OK)
+            if (slip_family_argument(p, token->value, strlen(token->value), NULL, &err) != SLIP_OK)
                 return complain_token(call, token, &err);
             continue;
         }

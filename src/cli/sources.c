@@ -4,6 +4,7 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "cli/families.h"
 #include "cli/message.h"
 #include "cli/values.h"
 
@@ -15,6 +16,15 @@ static const struct option options[] = {
     {"--classes", "N|A..B", true,
      "one permutation for each class under the eight symmetries of the\n"
      "square: its least member"},
+    {"--layered", "N|A..B", true, "all layered permutations (direct sums of falling runs)"},
+    {"--simple", "N|A..B", true, "all simple permutations (no interval but the trivial ones)"},
+    {"--family", "EXPR", true,
+     "a family, such as 'up(n) + down(2*k)', with --n and --let after it;\n"
+     "docs/families.md has the language"},
+    {"--n", "A|A..B", true, "of the --family before it: the values of n"},
+    {"--let", "K=A|K=A..B", true,
+     "of the --family before it: the values of any other parameter; all\n"
+     "combinations are taken"},
     {"--random", "K", true, "K uniform random permutations; needs --length and --seed after it"},
     {"--length", "N|A..B", true, "of the --random before it: the length, or where to draw it from"},
     {"--seed", "S", true, "of the --random before it: the same seed gives the same permutations"},
@@ -25,12 +35,33 @@ static const struct option options[] = {
 const struct option_group sources_options = {"Permutations (read in the order given)", options,
                                              sizeof options / sizeof *options};
 
+/* Sources that are a range of lengths. */
+static const struct lengths {
+    const char *name;
+    slip_status (*add)(struct slip_source *source, uint32_t from, uint32_t to,
+                       struct slip_error *err);
+} all_lengths[] = {
+    {"--all", slip_source_add_all},
+    {"--classes", slip_source_add_classes},
+    {"--layered", slip_source_add_layered},
+    {"--simple", slip_source_add_simple},
+};
+
 /* One source as the command line gives it. */
 struct request {
     const struct token *token;         /* the argument, or the option that begins it */
+    const struct lengths *lengths;     /* NULL for the others */
+    struct range range;                /* of these, and of --random */
     const struct token *length, *seed; /* of --random */
-    struct range range;                /* of --all, --classes, --random */
     uint64_t count, seed_value;        /* of --random */
+    struct family_request family;      /* of --family */
+};
+
+/* The sources, and those to which the options that follow belong. */
+struct requests {
+    struct request *all;
+    size_t count;
+    struct request *random, *family;
 };
 
 static bool is(const struct token *token, const char *name)
@@ -38,13 +69,26 @@ static bool is(const struct token *token, const char *name)
     return token->option && !strcmp(token->option->name, name);
 }
 
-/* --length and --seed go to the last --random before them. */
-static int attach(const struct call *call, const struct token *token, struct request *random)
+static const struct lengths *find_lengths(const struct token *token)
+{
+    for (size_t i = 0; i < sizeof all_lengths / sizeof *all_lengths; i++)
+        if (is(token, all_lengths[i].name))
+            return &all_lengths[i];
+    return NULL;
+}
+
+static int stray(const struct call *call, const struct token *token, const char *owner)
 {
     size_t flag = strlen(token->option->name);
+    return misuse(call, token->index, 0, token->offset ? flag : strlen(token->value),
+                  "%s belongs to a %s before it, and there is none", token->option->name, owner);
+}
+
+/* --length and --seed go to the last --random before them. */
+static int attach_random(const struct call *call, const struct token *token, struct request *random)
+{
     if (!random)
-        return misuse(call, token->index, 0, token->offset ? flag : strlen(token->value),
-                      "%s belongs to a --random before it, and there is none", token->option->name);
+        return stray(call, token, "--random");
     const struct token **place = is(token, "--length") ? &random->length : &random->seed;
     if (*place)
         return misuse(call, token->index, token->offset, strlen(token->value),
@@ -65,46 +109,56 @@ static int check_random(const struct call *call, const struct request *request)
                                   : "--length N and --seed S");
 }
 
-static int read_requests(const struct call *call, size_t skip, struct request *requests,
-                         size_t *count)
+/* A new source, when the token begins one. */
+static int begin_request(const struct call *call, const struct token *token,
+                         struct requests *requests)
 {
-    struct request *random = NULL;
-    *count = 0;
+    const struct lengths *lengths = find_lengths(token);
+    bool begins = !token->option || lengths || is(token, "--file") || is(token, "--random") ||
+                  is(token, "--family");
+    if (!begins)
+        return 0;
+    struct request *next = &requests->all[requests->count++];
+    *next = (struct request){.token = token, .lengths = lengths};
+    if (is(token, "--random"))
+        requests->random = next;
+    if (is(token, "--family"))
+        requests->family = next;
+    if (lengths)
+        return value_range(call, token, &next->range);
+    return next == requests->random ? value_number(call, token, 1, UINT64_MAX, &next->count) : 0;
+}
+
+static int read_request(const struct call *call, const struct token *token,
+                        struct requests *requests)
+{
+    if (is(token, "--length") || is(token, "--seed"))
+        return attach_random(call, token, requests->random);
+    if (!is(token, "--n") && !is(token, "--let"))
+        return begin_request(call, token, requests);
+    return requests->family ? family_bind(&requests->family->family, call, token)
+                            : stray(call, token, "--family");
+}
+
+static int read_requests(const struct call *call, size_t skip, struct requests *requests)
+{
     for (size_t i = 0; i < call->count; i++) {
         const struct token *token = &call->tokens[i];
-        struct request *next = &requests[*count];
-        int code = 0;
-        if (is(token, "--length") || is(token, "--seed")) {
-            code = attach(call, token, random);
-        } else if (!token->option) {
-            if (skip) {
-                skip--;
-                continue;
-            }
-            *next = (struct request){.token = token};
-            ++*count;
-        } else if (is(token, "--file") || is(token, "--all") || is(token, "--classes") ||
-                   is(token, "--random")) {
-            *next = (struct request){.token = token};
-            ++*count;
-            if (is(token, "--all") || is(token, "--classes"))
-                code = value_range(call, token, &next->range);
-            if (is(token, "--random")) {
-                random = next;
-                code = value_number(call, token, 1, UINT64_MAX, &next->count);
-            }
-        }
+        bool skipped = !token->option && skip;
+        skip -= skipped;
+        int code = skipped ? 0 : read_request(call, token, requests);
         if (code)
             return code;
     }
-    for (size_t i = 0; i < *count; i++) {
-        int code = check_random(call, &requests[i]);
+    for (size_t i = 0; i < requests->count; i++) {
+        int code = check_random(call, &requests->all[i]);
         if (code)
             return code;
     }
-    if (*count == 0)
+    if (requests->count == 0)
         return misuse_missing(call, "no permutations given: write one as an argument, or use "
-                                    "--file, --all, --classes or --random");
+                                    "--file, --all, --classes, --layered, --simple, --family or "
+                                    "--random");
     return 0;
 }
 
@@ -132,57 +186,50 @@ static void suggest_quotes(const struct call *call, size_t skip)
                 arguments, joined);
 }
 
-static slip_status add(struct slip_source *source, const struct request *request,
-                       struct slip_error *err)
+static int add(const struct call *call, size_t skip, struct slip_source *source,
+               const struct request *request)
 {
     const struct token *token = request->token;
     const struct range *range = &request->range;
+    struct slip_error err = SLIP_ERROR_NONE;
+    slip_status status;
+    if (is(token, "--family"))
+        return family_add(&request->family, call, token, source);
     if (!token->option)
-        return slip_source_add_text(source, token->value, err);
-    if (is(token, "--file"))
-        return slip_source_add_file(source, token->value, err);
-    if (is(token, "--all"))
-        return slip_source_add_all(source, range->from, range->to, err);
-    if (is(token, "--classes"))
-        return slip_source_add_classes(source, range->from, range->to, err);
-    return slip_source_add_random(source, request->count, range->from, range->to,
-                                  request->seed_value, err);
-}
-
-static int add_all(const struct call *call, size_t skip, struct slip_source *source,
-                   const struct request *requests, size_t count)
-{
-    for (size_t i = 0; i < count; i++) {
-        struct slip_error err = SLIP_ERROR_NONE;
-        if (add(source, &requests[i], &err) == SLIP_OK)
-            continue;
-        int code = complain_token(call, requests[i].token, &err);
-        if (!requests[i].token->option && err.status == SLIP_DATA)
-            suggest_quotes(call, skip);
-        return code;
-    }
-    return 0;
+        status = slip_source_add_text(source, token->value, &err);
+    else if (request->lengths)
+        status = request->lengths->add(source, range->from, range->to, &err);
+    else if (is(token, "--file"))
+        status = slip_source_add_file(source, token->value, &err);
+    else
+        status = slip_source_add_random(source, request->count, range->from, range->to,
+                                        request->seed_value, &err);
+    if (status == SLIP_OK)
+        return 0;
+    complain_token(call, token, &err);
+    if (!token->option && status == SLIP_DATA)
+        suggest_quotes(call, skip);
+    return status;
 }
 
 int sources_open(const struct call *call, size_t skip, struct slip_source **source)
 {
-    struct request *requests = calloc(call->count + 1, sizeof *requests);
+    struct requests requests = {.all = calloc(call->count + 1, sizeof *requests.all)};
     struct slip_error err = SLIP_ERROR_NONE;
-    size_t count;
     *source = NULL;
-    if (!requests)
+    if (!requests.all)
         return complain_memory();
-    int code = read_requests(call, skip, requests, &count);
+    int code = read_requests(call, skip, &requests);
     if (!code && slip_source_new(source, &err) != SLIP_OK)
         code = complain_error(call, &err);
-    if (!code)
-        code = add_all(call, skip, *source, requests, count);
+    for (size_t i = 0; i < requests.count && !code; i++)
+        code = add(call, skip, *source, &requests.all[i]);
     if (!code && slip_source_open(*source, &err) != SLIP_OK)
         code = complain_error(call, &err);
     if (code) {
         slip_source_free(*source);
         *source = NULL;
     }
-    free(requests);
+    free(requests.all);
     return code;
 }
