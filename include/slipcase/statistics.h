@@ -79,6 +79,9 @@ struct slip_statistics {
 SLIP_API void slip_statistics_init(struct slip_statistics *list);
 SLIP_API void slip_statistics_clear(struct slip_statistics *list); /* idempotent */
 
+/* The bytes before the first comma that stands outside of brackets, or the whole length. */
+SLIP_API size_t slip_statistics_item(const char *text, size_t length);
+
 /* Appends the statistics of a list separated by commas ("n,bonds,occ(2,1,3)"; commas within
  * brackets do not separate). Errors as slip_statistic_parse; the list is unchanged then. */
 SLIP_API slip_status slip_statistics_parse(struct slip_statistics *list, const char *text,

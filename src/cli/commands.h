@@ -8,5 +8,6 @@ extern const struct command command_list;
 extern const struct command command_insert;
 extern const struct command command_delete;
 extern const struct command command_contains;
+extern const struct command command_statistics;
 
 #endif

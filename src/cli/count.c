@@ -3,6 +3,7 @@
 #include <string.h>
 
 #include "cli/batch.h"
+#include "cli/cells.h"
 #include "cli/columns.h"
 #include "cli/commands.h"
 #include "cli/counting.h"
@@ -14,7 +15,8 @@
 static const struct option options[] = {
     {"--columns", "LIST", false,
      "the columns to print, in this order, separated by commas; besides the\n"
-     "usual ones also: name, avoiders"},
+     "usual ones also: name, avoiders, param(K) for a parameter K of a\n"
+     "--family, and every statistic (see 'slipcase statistics')"},
     {"--summary", NULL, false,
      "instead of rows, for each n and r: how many permutations, the least,\n"
      "greatest and mean count, how often each count occurs, an example of\n"
@@ -42,7 +44,7 @@ struct counting {
     size_t held;
     const struct slip_item *showing; /* the item of the row that is being shown */
     const struct slip_row *end;      /* of the rows that are being counted */
-    struct slip_text cells[COLUMNS_MOST];
+    const char **cells;
 };
 
 /* Whose row it was goes before the message. */
@@ -64,19 +66,19 @@ static slip_status name_row(slip_status status, const struct slip_row *row, stru
     return status;
 }
 
-static slip_status show(struct counting *counting, struct slip_row *row, const char *name,
-                        struct slip_error *err)
+static slip_status show(struct counting *counting, struct slip_row *row,
+                        const struct slip_item *item, struct slip_error *err)
 {
-    const char *cells[COLUMNS_MOST];
-    for (size_t c = 0; c < counting->columns.count; c++) {
-        const struct count_column *column = counting->columns.column[c];
-        slip_text_reset(&counting->cells[c]);
-        slip_status status = column->write(&counting->cells[c], row, name, err);
-        if (status != SLIP_OK)
-            return status;
-        cells[c] = slip_text_get(&counting->cells[c]);
+    struct columns *columns = &counting->columns;
+    slip_status status = columns_write(columns, row, item, &counting->batch->work.hooks, err);
+    if (status != SLIP_OK)
+        return status;
+    for (size_t c = 0; c < columns->count; c++) {
+        const struct slip_text *cell = &columns->column[c].cell;
+        bool absent = !cell->length && columns->column[c].parameter.length;
+        counting->cells[c] = absent ? NULL : slip_text_get(cell);
     }
-    return batch_row(counting->batch, cells, err);
+    return batch_row(counting->batch, counting->cells, err);
 }
 
 static slip_status summarise(struct counting *counting, const struct slip_item *item,
@@ -110,7 +112,7 @@ static slip_status row_done(void *context, struct slip_row *row, struct slip_err
     if (status == SLIP_OK && counting->summarise)
         status = summarise(counting, item, row, err);
     else if (status == SLIP_OK)
-        status = show(counting, row, slip_text_get(&item->name), err);
+        status = show(counting, row, item, err);
     if (status == SLIP_OK) {
         counting->batch->work.rows++;
         counting->batch->work.results += mpz_get_d(row->distinct);
@@ -159,10 +161,31 @@ static slip_status hold(void *context, const struct slip_item *item, struct slip
     slip_text_reset(&place->name);
     slip_text_string(&place->name, slip_text_get(&item->name));
     place->is_class = item->is_class;
+    memcpy(place->parameters, item->parameters, sizeof place->parameters);
+    place->parameter_count = item->parameter_count;
     counting->held++;
     if (counting->held == CHUNK || (uint64_t)item->perm.n > 1000000)
         return count_held(counting, err);
     return slip_text_ok(&place->name, err);
+}
+
+static int begin_report(struct counting *counting)
+{
+    size_t count = counting->columns.count;
+    struct slip_column *columns = calloc(count + 1, sizeof *columns);
+    counting->cells = calloc(count + 1, sizeof *counting->cells);
+    int code = columns && counting->cells ? 0 : complain_memory();
+    for (size_t c = 0; c < count && !code; c++) {
+        const struct column *column = &counting->columns.column[c];
+        columns[c].name = slip_text_get(&column->title);
+        columns[c].cell = column->listed           ? column->listed->cell
+                          : column->statistic.kind ? cell_of_statistic(&column->statistic)
+                                                   : SLIP_CELL_NUMBER;
+    }
+    if (!code)
+        code = batch_columns(counting->batch, columns, count);
+    free(columns);
+    return code;
 }
 
 static int begin(struct counting *counting, const struct call *call)
@@ -171,7 +194,7 @@ static int begin(struct counting *counting, const struct call *call)
     if (!code)
         code = counting_engine(call, &counting->engine);
     if (!code)
-        code = columns_choose(&counting->columns, call, false);
+        code = columns_choose(&counting->columns, call);
     if (!code && counting->summarise && call_flag(call, "--columns"))
         code = misuse_missing(call, "--summary has columns of its own: leave out --columns");
     bool names = !counting->summarise && !call_flag(call, "--columns");
@@ -180,14 +203,9 @@ static int begin(struct counting *counting, const struct call *call)
     if (!code)
         code = counting_fits(call, counting->engine, counting->batch->source, counting->r.to);
     if (!code)
-        code = columns_choose(&counting->columns, call, counting->batch->names);
-    if (code || counting->summarise)
-        return code;
-    struct slip_column columns[COLUMNS_MOST];
-    for (size_t c = 0; c < counting->columns.count; c++)
-        columns[c] = (struct slip_column){counting->columns.column[c]->name,
-                                          counting->columns.column[c]->cell};
-    return batch_columns(counting->batch, columns, counting->columns.count);
+        code = columns_complete(&counting->columns, call, counting->batch->names,
+                                counting->batch->source);
+    return code || counting->summarise ? code : begin_report(counting);
 }
 
 static int run(struct call *call)
@@ -213,8 +231,8 @@ static int run(struct call *call)
     slip_summary_clear(&counting->summary);
     for (size_t i = 0; i < CHUNK; i++)
         slip_item_clear(&counting->items[i]);
-    for (size_t c = 0; c < COLUMNS_MOST; c++)
-        slip_text_clear(&counting->cells[c]);
+    columns_clear(&counting->columns);
+    free(counting->cells);
     free(counting);
     return code;
 }
@@ -226,13 +244,16 @@ const struct command command_count = {
     .examples = "slipcase count -r 1..3 '1 3 2'\n"
                 "slipcase count -r 2 --classes 6 --format csv\n"
                 "slipcase count -r 3 --file shelf.txt --columns name,distinct\n"
-                "slipcase count -r 2 --classes 5 --summary\n",
+                "slipcase count -r 2 --classes 5 --summary\n"
+                "slipcase count -r 3 --family 'up(n) - up(k)' --n 1..5 --let k=1..2\n"
+                "slipcase count -r 2 --all 4 --columns permutation,distinct,staircases\n",
     .details = "Columns: permutation, n (its length), r, distinct (different results),\n"
                "placements (results with the inserted points marked), sequences (insertion\n"
                "sequences), orbit (size of its class under the eight symmetries of the square),\n"
-               "engine (what counted), name (when the input has any); and on request avoiders\n"
-               "(permutations of length n + r that do not contain it).\n"
-               "In JSON distinct, placements, sequences and avoiders are strings.\n",
+               "engine (what counted), name (when the input has any), param(K) for each\n"
+               "parameter K of a --family; and on request avoiders (permutations of length\n"
+               "n + r that do not contain it) and statistics ('slipcase statistics' lists them).\n"
+               "In JSON distinct, placements, sequences, avoiders and occ(P) are strings.\n",
     .groups = groups,
     .run = run,
 };

@@ -233,3 +233,15 @@ int sources_open(const struct call *call, size_t skip, struct slip_source **sour
     free(requests.all);
     return code;
 }
+
+bool sources_given(const struct call *call, size_t skip)
+{
+    for (size_t i = 0; i < call->count; i++) {
+        const struct option *option = call->tokens[i].option;
+        if (option ? option >= options && option < options + sizeof options / sizeof *options
+                   : skip == 0)
+            return true;
+        skip -= !option;
+    }
+    return false;
+}

@@ -15,4 +15,7 @@ extern const struct option_group sources_options;
  */
 int sources_open(const struct call *call, size_t skip, struct slip_source **source);
 
+/* Whether any permutations are given, by the same rules. */
+bool sources_given(const struct call *call, size_t skip);
+
 #endif

@@ -103,8 +103,8 @@ int value_word(const struct call *call, const struct token *token, const char *c
                   token->option->name, list, token->value);
 }
 
-static int unknown_word(const struct call *call, const struct token *token, const char *kind,
-                        const char *const *words, size_t count, size_t offset, size_t span)
+int value_unknown(const struct call *call, const struct token *token, const char *kind,
+                  const char *const *words, size_t count, size_t offset, size_t span)
 {
     char text[40];
     snprintf(text, sizeof text, "%.*s", (int)span, token->value + offset);
@@ -127,7 +127,7 @@ int value_list(const struct call *call, const struct token *token, const char *k
                (strlen(words[word]) != span || memcmp(words[word], token->value + offset, span)))
             word++;
         if (word == count)
-            return unknown_word(call, token, kind, words, count, offset, span);
+            return value_unknown(call, token, kind, words, count, offset, span);
         for (size_t i = 0; i < *number; i++)
             if (chosen[i] == word)
                 return misuse(call, token->index, token->offset + offset, span,

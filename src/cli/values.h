@@ -31,4 +31,9 @@ int value_word(const struct call *call, const struct token *token, const char *c
 int value_list(const struct call *call, const struct token *token, const char *kind,
                const char *const *words, size_t count, size_t *chosen, size_t *number);
 
+/* The `span` bytes at `offset` of the token's value are none of the words: says so, with the
+ * nearest of them. */
+int value_unknown(const struct call *call, const struct token *token, const char *kind,
+                  const char *const *words, size_t count, size_t offset, size_t span);
+
 #endif

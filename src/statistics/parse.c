@@ -216,15 +216,14 @@ static slip_status append(struct slip_statistics *list, struct reader *r)
     return status;
 }
 
-/* The first comma outside of brackets, or the end. */
-static size_t item_end(const char *text, size_t from, size_t length)
+size_t slip_statistics_item(const char *text, size_t length)
 {
-    size_t depth = 0;
-    for (; from < length && (depth || text[from] != ','); from++) {
-        depth += text[from] == '(';
-        depth -= depth && text[from] == ')';
+    size_t depth = 0, i = 0;
+    for (; i < length && (depth || text[i] != ','); i++) {
+        depth += text[i] == '(';
+        depth -= depth && text[i] == ')';
     }
-    return from;
+    return i;
 }
 
 slip_status slip_statistics_parse(struct slip_statistics *list, const char *text, size_t length,
@@ -233,7 +232,7 @@ slip_status slip_statistics_parse(struct slip_statistics *list, const char *text
     size_t before = list->count;
     slip_status status;
     for (size_t from = 0;; from++) {
-        size_t to = item_end(text, from, length);
+        size_t to = from + slip_statistics_item(text + from, length - from);
         struct reader r = {text, from, to, err};
         status = append(list, &r);
         from = to;

@@ -55,28 +55,24 @@ STATISTIC(layers, PLAIN, DIAGONALS, NULL,
           "layers, where it is layered (a direct sum of decreasing runs), else 0", "O(n)",
           "definition")
 STATISTIC(interior_layers, PLAIN, ALL, "interior_layers",
-          "layers of at least two elements that are neither the first nor the last, where it or "
-          "its reverse is layered, else 0",
+          "layers of size >= 2, neither first nor last, of it or its reverse where layered, else 0",
           "O(n)", "definition")
 STATISTIC(proper_intervals, PLAIN, ALL, "proper_intervals",
-          "intervals (runs of positions that hold a run of values) of 2 to n-1 elements; 0 for the "
-          "simple permutations",
-          "O(n log n)", "definition; positions swept from left to right over a segment tree")
+          "intervals (runs of positions with a run of values) of 2 to n-1 elements", "O(n log n)",
+          "definition; positions swept from left to right over a segment tree")
 STATISTIC(intervals, SIZE, ALL, "intervals", "intervals of K elements", "O(n)",
           "definition; extremes of a sliding window")
 STATISTIC(staircases, PLAIN, ALL, "staircases",
-          "intervals whose pattern is a staircase, counted once as rising and once as falling: the "
-          "defect of two insertions",
-          "O(n^2)", "definition")
-STATISTIC(occ, PATTERN, ONE, "occ",
-          "occurrences of the pattern P, as a subsequence in the same relative order",
+          "intervals whose pattern is a staircase, rising ones and falling ones added up", "O(n^2)",
+          "definition")
+STATISTIC(occ, PATTERN, ONE, "occ", "occurrences of P: subsequences in the same relative order",
           "O(n log n) up to length 2, else a search of up to n^k steps, k the length of P",
           "definition")
 STATISTIC(interval, PATTERN, ONE, "interval", "intervals whose pattern is P", "O(n)",
           "D. Knuth, J. Morris, V. Pratt, Fast pattern matching in strings, SIAM Journal on "
           "Computing 6 (1977), on the steps between neighbours")
 STATISTIC(corners, PLAIN, ALL, "corners",
-          "corners of the square that hold an element, 0 to 4 (the sum of the four below)", "O(1)",
+          "corners of the square that hold an element (the sum of the four below)", "O(1)",
           "definition")
 STATISTIC(corner_bottom_left, PLAIN, RISING_DIAGONAL, "corner_bottom_right",
           "1 if the first element is 1, else 0", "O(1)", "definition")
@@ -87,7 +83,7 @@ STATISTIC(corner_bottom_right, PLAIN, FALLING_DIAGONAL, "corner_bottom_left",
 STATISTIC(corner_top_right, PLAIN, RISING_DIAGONAL, "corner_top_left",
           "1 if the last element is n, else 0", "O(1)", "definition")
 STATISTIC(borders, PLAIN, ALL, "borders",
-          "borders of the square at which a bond lies, 0 to 4 (the sum of the four below)", "O(n)",
+          "borders of the square at which a bond lies (the sum of the four below)", "O(n)",
           "definition")
 STATISTIC(border_left, PLAIN, UP_DOWN, "border_right",
           "1 if the first two elements are a bond, else 0", "O(1)", "definition")
