@@ -152,6 +152,8 @@ slip_status slip_source_add_family(struct slip_source *source, const char *text,
     }
     first_values(part, part->values);
     status = slip_source_push(source, &part->part, err);
+    if (status != SLIP_OK) /* the part is released */
+        return status;
     for (size_t i = 0; i < part->count && status == SLIP_OK; i++)
         status = slip_source_name_parameter(
             source, slip_family_parameter(part->family, part->ranges[i].parameter), err);
