@@ -100,7 +100,8 @@ SLIP_API slip_status slip_source_has_names(struct slip_source *source, bool *nam
 /* The length of the longest permutation that is known without reading files; 0 without any. */
 SLIP_API uint32_t slip_source_longest(const struct slip_source *source);
 
-/* How many permutations there are in all, when that is known without reading files; else 0. */
+/* How many permutations there are in all, when that is known without reading files and below
+ * 10^15; else 0. */
 SLIP_API double slip_source_total(const struct slip_source *source);
 
 /*

@@ -198,7 +198,7 @@ static double estimate(const struct lift *lift)
         log++;
     double cells = (double)lift->a->rows * (double)columns;
     double digits = (double)rank * (double)(columns - rank);
-    return cells * 80 + digits * (double)rank * (double)(bits + log / 2) / 2;
+    return cells * 80 + digits * (double)rank * ((double)bits + (double)log / 2) / 2;
 }
 
 /* Primes until a reconstruction is verified; tried each time their number grew by a quarter. */

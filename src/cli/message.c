@@ -70,17 +70,14 @@ static size_t columns(const char *entry, size_t bytes)
 /* The call on one line, and a line that underlines the place. Long calls show that entry alone. */
 static void point(const struct call *call, int index, size_t offset, size_t span)
 {
-    size_t length = 0, before = 0;
-    for (int i = 1; i < call->argc; i++) {
-        if (i == index)
-            before = length;
+    size_t length = 0;
+    for (int i = 1; i < call->argc; i++)
         length += strlen(call->argv[i]) + 3;
-    }
     bool alone = length > 400;
     if (alone && strlen(call->argv[index]) > 400)
         return;
     fputs("    ", stderr);
-    before = 4;
+    size_t before = 4;
     if (alone) {
         fputs("... ", stderr);
         before += 4;

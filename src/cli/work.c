@@ -62,8 +62,8 @@ static void show(void *context, double done, double all)
     if (work->label[0])
         used += snprintf(line + used, sizeof line - (size_t)used, "; now %s", work->label);
     if (all > 0 && done > 0)
-        used += snprintf(line + used, sizeof line - (size_t)used, " %.0f %%, about %.0f s left",
-                         100 * done / all, (now - work->row_begun) * (all - done) / done);
+        snprintf(line + used, sizeof line - (size_t)used, " %.0f %%, about %.0f s left",
+                 100 * done / all, (now - work->row_begun) * (all - done) / done);
     unsigned width = terminal_width() - 1;
     fprintf(stderr, "\r%.*s\033[K", (int)width, line);
     fflush(stderr);

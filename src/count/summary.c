@@ -98,7 +98,7 @@ slip_status slip_summary_add(struct slip_summary *summary, const struct slip_per
                              const mpz_t distinct, uint64_t weight, struct slip_error *err)
 {
     struct slip_summary_group *group;
-    size_t fresh;
+    size_t fresh = SIZE_MAX;
     slip_status status = find_group(&group, summary, p->n, r, err);
     if (status == SLIP_OK)
         status = count_value(group, distinct, weight, &fresh, err);
