@@ -21,6 +21,7 @@ static void prefix(const struct call *call)
     fputs(colour() ? ":\033[0m " : ": ", stderr);
 }
 
+SLIP_PRINTF(2, 0)
 static void print(const struct call *call, const char *format, va_list arguments)
 {
     fflush(stdout); /* rows stand before the message that ends them */
