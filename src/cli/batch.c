@@ -1,5 +1,6 @@
 #include "cli/batch.h"
 
+#include <stdlib.h>
 #include <string.h>
 
 #include "cli/message.h"
@@ -30,9 +31,28 @@ int batch_columns(struct batch *batch, const struct slip_column *columns, size_t
     return 0;
 }
 
+int batch_columns_and_parameters(struct batch *batch, const struct slip_column *columns,
+                                 size_t count)
+{
+    struct slip_error err = SLIP_ERROR_NONE;
+    struct slip_column *all = NULL;
+    slip_status status =
+        parameters_begin(&batch->parameters, &all, columns, count, batch->source, &err);
+    int code = status == SLIP_OK ? batch_columns(batch, all, count + batch->parameters.count)
+                                 : complain_error(batch->call, &err);
+    free(all);
+    return code;
+}
+
 slip_status batch_row(struct batch *batch, const char *const *cells, struct slip_error *err)
 {
-    slip_status status = slip_report_row(batch->report, cells, &batch->output.text, err);
+    slip_status status = SLIP_OK;
+    if (batch->parameters.count) {
+        status = parameters_cells(&batch->parameters, cells, batch->item, err);
+        cells = batch->parameters.cells;
+    }
+    if (status == SLIP_OK)
+        status = slip_report_row(batch->report, cells, &batch->output.text, err);
     if (status != SLIP_OK)
         return status;
     if (batch->output.text.length)
@@ -73,6 +93,7 @@ int batch_run(struct batch *batch, batch_work work, void *context)
 {
     struct slip_item item;
     slip_item_init(&item);
+    batch->item = &item;
     int bad = 0;
     bool more = true;
     slip_status status = SLIP_OK;
@@ -99,6 +120,7 @@ int batch_run(struct batch *batch, batch_work work, void *context)
         more = true;
     }
     slip_item_clear(&item);
+    batch->item = NULL;
     return status == SLIP_OK ? bad : stop(batch, &err, status);
 }
 
@@ -114,6 +136,7 @@ int batch_end(struct batch *batch, int code)
         work_end(&batch->work, batch->call, batch->format == SLIP_TABLE);
     work_hide(&batch->work);
     slip_report_free(batch->report);
+    parameters_clear(&batch->parameters);
     slip_source_free(batch->source);
     output_clear(&batch->output);
     return code;

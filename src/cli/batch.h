@@ -8,6 +8,7 @@
 
 #include "cli/options.h"
 #include "cli/output.h"
+#include "cli/parameters.h"
 #include "cli/work.h"
 #include "slipcase/source.h"
 
@@ -18,8 +19,10 @@ struct batch {
     struct work work;
     struct slip_report *report;
     enum slip_format format;
-    bool names;      /* some permutation in the files has a name */
-    bool keep_going; /* bad lines do not end the run */
+    bool names;                   /* some permutation in the files has a name */
+    bool keep_going;              /* bad lines do not end the run */
+    const struct slip_item *item; /* that the work is being done for */
+    struct parameter_columns parameters;
 };
 
 /* Reads the options that all such commands share; skip is the number of positional arguments that
@@ -28,6 +31,11 @@ int batch_begin(struct batch *batch, const struct call *call, size_t skip, bool 
 
 /* Sets the columns of the report; the name column is added by the caller. */
 int batch_columns(struct batch *batch, const struct slip_column *columns, size_t count);
+
+/* The same with further columns for the parameters of families, which batch_row fills in: for
+ * commands that add the rows of an item while they work on it. */
+int batch_columns_and_parameters(struct batch *batch, const struct slip_column *columns,
+                                 size_t count);
 
 /* Does the work for one permutation: SLIP_OK, or what ends the run (its message in err). */
 typedef slip_status (*batch_work)(void *context, const struct slip_item *item,

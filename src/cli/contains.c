@@ -83,7 +83,7 @@ static int run(struct call *call)
     if (!code && !searching.positions)
         code = complain_memory();
     if (!code)
-        code = batch_columns(&batch, columns, batch.names ? 6 : 5);
+        code = batch_columns_and_parameters(&batch, columns, batch.names ? 6 : 5);
     if (!code)
         code = batch_run(&batch, search, &searching);
     code = batch_end(&batch, code);

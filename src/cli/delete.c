@@ -62,7 +62,7 @@ static int run(struct call *call)
     batch.work.total = 0;
     slip_text_number(&deleting.number, deleting.r);
     if (!code)
-        code = batch_columns(&batch, columns, batch.names ? 5 : 4);
+        code = batch_columns_and_parameters(&batch, columns, batch.names ? 5 : 4);
     if (!code)
         code = batch_run(&batch, delete, &deleting);
     code = batch_end(&batch, code);

@@ -280,8 +280,9 @@ static int set_columns(struct listing *listing)
                                                  {"results", SLIP_CELL_BIG},
                                                  {"name", SLIP_CELL_TEXT}};
     if (listing->distribution)
-        return batch_columns(listing->batch, counted, listing->batch->names ? 5 : 4);
-    if (!listing->count) { /* the usual ones */
+        return batch_columns_and_parameters(listing->batch, counted, listing->batch->names ? 5 : 4);
+    bool usual = !listing->count;
+    if (usual) {
         for (size_t c = 0; c < MOST; c++)
             if ((c != WITNESS || listing->witness) && (c != NAME || listing->batch->names))
                 listing->columns[listing->count++] = c;
@@ -290,7 +291,8 @@ static int set_columns(struct listing *listing)
     struct slip_column columns[MOST];
     for (size_t c = 0; c < listing->count; c++)
         columns[c] = all[listing->columns[c]];
-    return batch_columns(listing->batch, columns, listing->count);
+    return usual ? batch_columns_and_parameters(listing->batch, columns, listing->count)
+                 : batch_columns(listing->batch, columns, listing->count);
 }
 
 static int begin(struct listing *listing, const struct call *call)

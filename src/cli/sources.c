@@ -24,7 +24,7 @@ static const struct option options[] = {
     {"--n", "A|A..B", true, "of the --family before it: the values of n"},
     {"--let", "K=A|K=A..B", true,
      "of the --family before it: the values of any other parameter; all\n"
-     "combinations are taken"},
+     "combinations are taken, and shown in columns such as param(n)"},
     {"--random", "K", true, "K uniform random permutations; needs --length and --seed after it"},
     {"--length", "N|A..B", true, "of the --random before it: the length, or where to draw it from"},
     {"--seed", "S", true, "of the --random before it: the same seed gives the same permutations"},

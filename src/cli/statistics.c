@@ -95,11 +95,8 @@ static int list(const struct call *call)
 struct measuring {
     struct batch batch;
     struct slip_statistics statistics;
-    const char *const *parameters;
-    size_t parameter_count;
     struct slip_text permutation;
-    struct slip_text *texts;  /* of the statistics, then of the parameters */
-    struct slip_text *titles; /* of the parameters */
+    struct slip_text *values; /* of the statistics */
     const char **cells;
 };
 
@@ -108,42 +105,32 @@ static slip_status measure(void *context, const struct slip_item *item, struct s
     struct measuring *m = context;
     if (!item)
         return SLIP_OK;
-    size_t statistics = m->statistics.count, count = 0;
-    slip_status status = SLIP_OK;
+    size_t count = 0;
     work_label(&m->batch.work, &item->perm, 0);
     slip_text_reset(&m->permutation);
     slip_perm_write(&m->permutation, &item->perm);
+    slip_status status = slip_text_ok(&m->permutation, err);
     m->cells[count++] = slip_text_get(&m->permutation);
-    for (size_t i = 0; i < statistics && status == SLIP_OK; i++) {
-        slip_text_reset(&m->texts[i]);
-        status = cell_statistic(&m->texts[i], &m->statistics.items[i], &item->perm,
+    for (size_t i = 0; i < m->statistics.count && status == SLIP_OK; i++) {
+        slip_text_reset(&m->values[i]);
+        status = cell_statistic(&m->values[i], &m->statistics.items[i], &item->perm,
                                 &m->batch.work.hooks, err);
-        m->cells[count++] = slip_text_get(&m->texts[i]);
+        m->cells[count++] = slip_text_get(&m->values[i]);
     }
-    if (m->batch.names)
-        m->cells[count++] = slip_text_get(&item->name);
-    for (size_t i = 0; i < m->parameter_count && status == SLIP_OK; i++) {
-        struct slip_text *text = &m->texts[statistics + i];
-        slip_text_reset(text);
-        status = cell_parameter(text, item, m->parameters[i], err);
-        m->cells[count++] = text->length ? slip_text_get(text) : NULL;
-    }
-    if (status == SLIP_OK)
-        status = slip_text_ok(&m->permutation, err);
     if (status != SLIP_OK)
         return status;
+    m->cells[count] = slip_text_get(&item->name);
     m->batch.work.rows++;
     return batch_row(&m->batch, m->cells, err);
 }
 
 static int begin_report(struct measuring *m)
 {
-    size_t statistics = m->statistics.count, most = statistics + m->parameter_count, count = 0;
-    struct slip_column *columns = calloc(most + 2, sizeof *columns);
-    m->texts = calloc(most + 1, sizeof *m->texts);
-    m->titles = calloc(m->parameter_count + 1, sizeof *m->titles);
-    m->cells = calloc(most + 2, sizeof *m->cells);
-    int code = columns && m->texts && m->titles && m->cells ? 0 : complain_memory();
+    size_t statistics = m->statistics.count, count = 0;
+    struct slip_column *columns = calloc(statistics + 2, sizeof *columns);
+    m->values = calloc(statistics + 1, sizeof *m->values);
+    m->cells = calloc(statistics + 2, sizeof *m->cells);
+    int code = columns && m->values && m->cells ? 0 : complain_memory();
     if (!code) {
         columns[count++] = (struct slip_column){"permutation", SLIP_CELL_TEXT};
         for (size_t i = 0; i < statistics; i++)
@@ -151,11 +138,7 @@ static int begin_report(struct measuring *m)
                                                     cell_of_statistic(&m->statistics.items[i])};
         if (m->batch.names)
             columns[count++] = (struct slip_column){"name", SLIP_CELL_TEXT};
-        for (size_t i = 0; i < m->parameter_count; i++) {
-            slip_text_format(&m->titles[i], "param(%s)", m->parameters[i]);
-            columns[count++] = (struct slip_column){slip_text_get(&m->titles[i]), SLIP_CELL_NUMBER};
-        }
-        code = batch_columns(&m->batch, columns, count);
+        code = batch_columns_and_parameters(&m->batch, columns, count);
     }
     free(columns);
     return code;
@@ -163,13 +146,9 @@ static int begin_report(struct measuring *m)
 
 static void clear(struct measuring *m)
 {
-    size_t texts = m->statistics.count + m->parameter_count;
-    for (size_t i = 0; m->texts && i < texts; i++)
-        slip_text_clear(&m->texts[i]);
-    for (size_t i = 0; m->titles && i < m->parameter_count; i++)
-        slip_text_clear(&m->titles[i]);
-    free(m->texts);
-    free(m->titles);
+    for (size_t i = 0; m->values && i < m->statistics.count; i++)
+        slip_text_clear(&m->values[i]);
+    free(m->values);
     free(m->cells);
     slip_text_clear(&m->permutation);
     slip_statistics_clear(&m->statistics);
@@ -204,10 +183,8 @@ static int run(struct call *call)
     int code = read_list(&m, call, token);
     if (!code)
         code = batch_begin(&m.batch, call, 0, true);
-    if (!code) {
-        m.parameters = slip_source_parameters(m.batch.source, &m.parameter_count);
+    if (!code)
         code = begin_report(&m);
-    }
     if (!code)
         code = batch_run(&m.batch, measure, &m);
     code = batch_end(&m.batch, code);
