@@ -41,7 +41,15 @@ struct slip_engine {
     slip_status (*visit)(const struct slip_perm *p, uint32_t r, bool multiplicities,
                          slip_visit visit, void *context, const struct slip_hooks *hooks,
                          struct slip_error *err);
+    /* `status` for one r, for engines where it depends on r; NULL: it does not. */
+    const char *(*status_for)(uint32_t r);
 };
+
+/* How far the engine's figures for this r are established: "proved", or in other words. */
+static inline const char *slip_engine_status(const struct slip_engine *engine, uint32_t r)
+{
+    return engine->status_for ? engine->status_for(r) : engine->status;
+}
 
 /* The engine of this name, or NULL. */
 SLIP_API const struct slip_engine *slip_engine_find(const char *name);
@@ -51,6 +59,14 @@ SLIP_API const struct slip_engine *const *slip_engine_list(size_t *count);
 
 /* Level by level through the hashed store. n + r <= 255. */
 extern SLIP_API const struct slip_engine slip_engine_store;
+
+/*
+ * By the ceiling, the staircase intervals and, for r = 3, the triple couplings (slipcase/ceiling.h,
+ * staircase.h, triple.h): r <= 3 and any length up to 2^29, in time that is linear for r <= 2 and
+ * nearly so, on most permutations, for r = 3. "proved" for r <= 2; what the formula for r = 3 rests
+ * on is in its status. Cannot list results.
+ */
+extern SLIP_API const struct slip_engine slip_engine_formula;
 
 /* ---- results in lexicographic order ---- */
 

@@ -1,0 +1,11 @@
+#ifndef FORMULA_TRIPLES_H
+#define FORMULA_TRIPLES_H
+
+/* slip_triple_count with parts of the scan left out (SCAN_NO_... of board.h). */
+
+#include "slipcase/triple.h"
+
+slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned without,
+                          const struct slip_hooks *hooks, struct slip_error *err);
+
+#endif
