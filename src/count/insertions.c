@@ -34,8 +34,8 @@ static void write_words(uint64_t *out, uint64_t bumped, uint64_t nibble, uint32_
     }
 }
 
-static void write_bytes(uint64_t *out, const unsigned char *elements, unsigned char value,
-                        uint32_t length, uint32_t words)
+static inline void write_bytes(uint64_t *out, const unsigned char *elements, unsigned char value,
+                               uint32_t length, uint32_t words)
 {
     uint64_t row[(SLIP_PACKED_LONGEST + 7) / 8];
     unsigned char *bytes = (unsigned char *)row;
@@ -53,6 +53,18 @@ static void write_bytes(uint64_t *out, const unsigned char *elements, unsigned c
     }
 }
 
+/* Few words a result are compiled apart, so that copying one is a few moves. */
+static void write_sized(uint64_t *out, const unsigned char *elements, unsigned char value,
+                        uint32_t length, uint32_t words)
+{
+    if (words == 3)
+        write_bytes(out, elements, value, length, 3);
+    else if (words == 4)
+        write_bytes(out, elements, value, length, 4);
+    else
+        write_bytes(out, elements, value, length, words);
+}
+
 bool slip_insertions_next(struct slip_insertions *insertions, uint64_t *out)
 {
     const uint32_t value = insertions->value;
@@ -67,7 +79,7 @@ bool slip_insertions_next(struct slip_insertions *insertions, uint64_t *out)
     } else {
         if (bumps)
             insertions->elements[insertions->place[value]]++;
-        write_bytes(out, insertions->elements, (unsigned char)value, insertions->length,
+        write_sized(out, insertions->elements, (unsigned char)value, insertions->length,
                     insertions->words);
     }
     insertions->value = value - 1;

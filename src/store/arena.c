@@ -4,14 +4,14 @@
 
 #include "store/pages.h"
 
-/* A chunk is about an eighth of what is expected, so that little of the last one is wasted. */
-enum { LEAST_SHIFT = 4, GREATEST_SHIFT = 16, CHUNKS_EXPECTED = 8, FIRST_ROOM = 8 };
+/* A chunk is an eighth of what was expected, within limits. */
+enum { LEAST_SHIFT = 4, GREATEST_SHIFT = 16, PART_SHIFT = 3, FIRST_ROOM = 8 };
 
-void slip_arena_init(struct slip_arena *arena, size_t item, double expected)
+void slip_arena_init(struct slip_arena *arena, size_t item, uint64_t expected)
 {
-    *arena = (struct slip_arena){.item = item, .shift = LEAST_SHIFT};
-    while (arena->shift < GREATEST_SHIFT &&
-           (double)((uint64_t)CHUNKS_EXPECTED << arena->shift) < expected)
+    *arena = (struct slip_arena){.item = item, .expected = expected ? expected : 1};
+    arena->shift = LEAST_SHIFT;
+    while (arena->shift < GREATEST_SHIFT && expected >> (arena->shift + PART_SHIFT))
         arena->shift++;
 }
 
@@ -20,9 +20,13 @@ void slip_arena_clear(struct slip_arena *arena)
     for (size_t i = 0; i < arena->count; i++)
         free(arena->chunks[i]);
     free(arena->chunks);
-    arena->chunks = NULL;
-    arena->count = arena->room = 0;
-    arena->used = 0;
+    free(arena->block);
+    slip_arena_init(arena, arena->item, arena->expected);
+}
+
+static size_t block_bytes(const struct slip_arena *arena)
+{
+    return arena->expected <= SIZE_MAX / arena->item ? arena->expected * arena->item : SIZE_MAX;
 }
 
 static size_t chunk_bytes(const struct slip_arena *arena)
@@ -30,38 +34,42 @@ static size_t chunk_bytes(const struct slip_arena *arena)
     return arena->item << arena->shift;
 }
 
-uint64_t slip_arena_bytes(const struct slip_arena *arena)
+/* The pointers to chunks that there must be room for when one more comes. */
+static size_t next_room(const struct slip_arena *arena)
 {
-    return (uint64_t)arena->count * chunk_bytes(arena) + arena->room * sizeof *arena->chunks;
+    if (arena->count < arena->room)
+        return arena->room;
+    return arena->room ? 2 * arena->room : FIRST_ROOM;
 }
 
-double slip_arena_estimate(const struct slip_arena *arena, double items)
+uint64_t slip_arena_bytes(const struct slip_arena *arena)
 {
-    double per_chunk = (double)((uint64_t)1 << arena->shift), chunks = 1, room = FIRST_ROOM;
-    if (items > per_chunk) {
-        chunks = items / per_chunk;
-        if (chunks < 0x1p53) /* beyond, every double is whole */
-            chunks = (double)(uint64_t)chunks + 1;
-    }
-    while (room < chunks)
-        room *= 2;
-    return chunks * (double)chunk_bytes(arena) + room * (double)sizeof *arena->chunks;
+    return (arena->block ? block_bytes(arena) : 0) + (uint64_t)arena->count * chunk_bytes(arena) +
+           arena->room * sizeof *arena->chunks;
+}
+
+double slip_arena_estimate(size_t item, double expected)
+{
+    return (expected < 1 ? 1 : expected) * (double)item;
 }
 
 uint64_t slip_arena_growth(const struct slip_arena *arena)
 {
-    if (!slip_arena_full(arena))
-        return 0;
-    size_t room = arena->room ? arena->room : FIRST_ROOM;
-    return chunk_bytes(arena) + (arena->count == arena->room ? room * sizeof *arena->chunks : 0);
+    if (!arena->block)
+        return block_bytes(arena);
+    size_t pointers = arena->count == arena->room ? next_room(arena) : 0;
+    return chunk_bytes(arena) + pointers * sizeof *arena->chunks;
 }
 
-bool slip_arena_reserve(struct slip_arena *arena)
+bool slip_arena_grow(struct slip_arena *arena)
 {
-    if (!slip_arena_full(arena))
-        return true;
+    if (!arena->block) {
+        arena->block = slip_pages_allocate(block_bytes(arena));
+        arena->capacity = arena->block ? arena->expected : 0;
+        return arena->block != NULL;
+    }
     if (arena->count == arena->room) {
-        size_t room = arena->room ? 2 * arena->room : FIRST_ROOM;
+        size_t room = next_room(arena);
         unsigned char **chunks = realloc(arena->chunks, room * sizeof *chunks);
         if (!chunks)
             return false;
@@ -72,5 +80,6 @@ bool slip_arena_reserve(struct slip_arena *arena)
     if (!chunk)
         return false;
     arena->chunks[arena->count++] = chunk;
+    arena->capacity += (uint64_t)1 << arena->shift;
     return true;
 }

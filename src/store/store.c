@@ -42,10 +42,8 @@ static uint64_t bucket_bytes(unsigned log2)
 
 double slip_store_estimate(uint32_t length, double expected)
 {
-    struct slip_arena arena;
-    slip_arena_init(&arena, entry_bytes(slip_packed_words(length)), expected);
-    return slip_arena_estimate(&arena, expected) + (double)bucket_bytes(table_log2(expected)) +
-           (double)fixed_bytes();
+    return slip_arena_estimate(entry_bytes(slip_packed_words(length)), expected) +
+           (double)bucket_bytes(table_log2(expected)) + (double)fixed_bytes();
 }
 
 uint64_t slip_store_bytes(const struct slip_store *store)
@@ -103,7 +101,7 @@ slip_status slip_store_open(struct slip_store **out, uint32_t length, uint64_t e
     store->first_log2 = table_log2((double)expected);
     store->memory = memory;
     store->most = UINT32_MAX;
-    slip_arena_init(&store->arena, entry_bytes(store->words), (double)expected);
+    slip_arena_init(&store->arena, entry_bytes(store->words), expected);
     slip_status status = make_table(store, err);
     if (status == SLIP_OK)
         *out = store;
@@ -136,23 +134,32 @@ static slip_status widen(struct slip_store *store, struct slip_error *err)
     return failed ? slip_fail_memory(err, more) : SLIP_OK;
 }
 
-/* Room for one more entry in arena and table. */
-static slip_status make_room(struct slip_store *store, struct slip_error *err)
+/* Whether the table has a bucket for each entry, with one more. */
+static inline bool table_is_wide(const struct slip_store *store)
+{
+    const UT_hash_table *table = store->head->hh.tbl;
+    return table->num_items < table->num_buckets || table->log2_num_buckets == GREATEST_LOG2;
+}
+
+/* Whether one more entry fits as things are. */
+static inline bool has_room(const struct slip_store *store)
+{
+    return store->arena.used < store->most && table_is_wide(store) &&
+           !slip_arena_full(&store->arena);
+}
+
+/* Makes room for one more entry in arena and table; kept out of the way of the common path. */
+__attribute__((cold)) static slip_status make_room(struct slip_store *store, struct slip_error *err)
 {
     if (store->arena.used >= store->most)
         return slip_fail(err, SLIP_LIMIT, "a set of permutations holds at most %llu of them",
                          (unsigned long long)store->most);
-    const UT_hash_table *table = store->head->hh.tbl;
-    if (table->num_items == table->num_buckets && table->log2_num_buckets < GREATEST_LOG2) {
-        slip_status status = widen(store, err);
-        if (status != SLIP_OK)
-            return status;
-    }
-    if (!slip_arena_full(&store->arena))
-        return SLIP_OK;
+    slip_status status = table_is_wide(store) ? SLIP_OK : widen(store, err);
+    if (status != SLIP_OK || !slip_arena_full(&store->arena))
+        return status;
     uint64_t more = slip_arena_growth(&store->arena);
-    slip_status status = afford(store, slip_store_bytes(store) + more, err);
-    if (status == SLIP_OK && !slip_arena_reserve(&store->arena))
+    status = afford(store, slip_store_bytes(store) + more, err);
+    if (status == SLIP_OK && !slip_arena_grow(&store->arena))
         status = slip_fail_memory(err, more);
     return status;
 }
@@ -160,7 +167,7 @@ static slip_status make_room(struct slip_store *store, struct slip_error *err)
 static inline slip_status add_new(struct slip_store *store, const uint64_t *key, uint32_t words,
                                   unsigned hash, uint64_t weight, struct slip_error *err)
 {
-    slip_status status = make_room(store, err);
+    slip_status status = has_room(store) ? SLIP_OK : make_room(store, err);
     if (status != SLIP_OK)
         return status;
     struct slip_entry *entry = slip_arena_item(&store->arena, store->arena.used);
@@ -186,10 +193,19 @@ static inline slip_status add_one(struct slip_store *store, const uint64_t *key,
 
 /*
  * Keys are looked up in runs, so that memory works on all of a run at once: first their buckets
- * are asked for, then the first entry of each bucket, and only then are the keys looked up. The
- * run is short enough for all of it to stay in the first-level cache.
+ * are asked for, then the first entry of each bucket, then the second one where the first is
+ * another permutation, and only then are the keys looked up. A run is long enough to keep memory
+ * busy and short enough for all of it to stay in the first-level cache.
  */
 enum { RUN = 32 };
+
+/* Asks for what a look-up reads and writes: the handle from hh_prev on, the weight and the key. Up
+ * to three words a key that is 64 bytes at most, so its two ends cover all lines it touches. */
+static inline void ask_for(const UT_hash_handle *handle, uint32_t words)
+{
+    __builtin_prefetch(&handle->hh_prev);
+    __builtin_prefetch((const char *)handle + sizeof(struct slip_entry) + 8 * words - 1);
+}
 
 static inline slip_status add_run(struct slip_store *store, const uint64_t *keys, size_t count,
                                   uint32_t words, const uint64_t *weights, struct slip_error *err)
@@ -202,11 +218,14 @@ static inline slip_status add_run(struct slip_store *store, const uint64_t *keys
         __builtin_prefetch(&table->buckets[hashes[i] & mask]);
     }
     for (size_t i = 0; i < count; i++) {
-        const char *first = (const char *)table->buckets[hashes[i] & mask].hh_head;
-        if (first) {
-            __builtin_prefetch(first + offsetof(UT_hash_handle, hh_prev));
-            __builtin_prefetch(first + sizeof(struct slip_entry));
-        }
+        const UT_hash_handle *first = table->buckets[hashes[i] & mask].hh_head;
+        if (first)
+            ask_for(first, words);
+    }
+    for (size_t i = 0; i < count; i++) {
+        const UT_hash_handle *first = table->buckets[hashes[i] & mask].hh_head;
+        if (first && first->hashv != hashes[i] && first->hh_next)
+            ask_for(first->hh_next, words);
     }
     slip_status status = SLIP_OK;
     for (size_t i = 0; i < count && status == SLIP_OK; i++)
@@ -214,17 +233,30 @@ static inline slip_status add_run(struct slip_store *store, const uint64_t *keys
     return status;
 }
 
+/* The sizes in common use (lengths up to 16, 24, 32) are compiled apart, as straight-line code. */
+static slip_status add_sized(struct slip_store *store, const uint64_t *keys, size_t count,
+                             const uint64_t *weights, struct slip_error *err)
+{
+    switch (store->words) {
+    case 1:
+        return add_run(store, keys, count, 1, weights, err);
+    case 3:
+        return add_run(store, keys, count, 3, weights, err);
+    case 4:
+        return add_run(store, keys, count, 4, weights, err);
+    default:
+        return add_run(store, keys, count, store->words, weights, err);
+    }
+}
+
 slip_status slip_store_add(struct slip_store *store, const uint64_t *keys, size_t count,
                            const uint64_t *weights, struct slip_error *err)
 {
     slip_status status = SLIP_OK;
-    const uint32_t words = store->words;
     while (count && status == SLIP_OK) {
         size_t run = count < RUN ? count : RUN;
-        /* The commonest size is compiled apart, as straight-line code. */
-        status = words == 1 ? add_run(store, keys, run, 1, weights, err)
-                            : add_run(store, keys, run, words, weights, err);
-        keys += run * words;
+        status = add_sized(store, keys, run, weights, err);
+        keys += run * store->words;
         weights = weights ? weights + run : NULL;
         count -= run;
     }
