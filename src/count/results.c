@@ -1,5 +1,6 @@
 #include <stdlib.h>
 
+#include "core/size.h"
 #include "count/sort.h"
 #include "slipcase/engine.h"
 
@@ -76,6 +77,20 @@ static slip_status append(void *context, const struct slip_batch *batch, struct 
     return SLIP_OK;
 }
 
+/* Whether the engine takes the job with the memory that the list leaves. */
+static slip_status accept_beside(double bytes, const struct slip_hooks *left,
+                                 const struct slip_engine *engine, const struct slip_perm *p,
+                                 uint32_t r, struct slip_error *err)
+{
+    struct slip_error inner = SLIP_ERROR_NONE;
+    slip_status status = engine->accepts(p, r, left, &inner);
+    if (status == SLIP_OK)
+        return SLIP_OK;
+    char list[32];
+    slip_size_write(list, sizeof list, bytes);
+    return slip_fail(err, status, "beside a list of %s, %.440s", list, inner.message);
+}
+
 /* Makes room for the list, and leaves in *left what the engine may use beside it. */
 static slip_status prepare(struct collector *collector, struct slip_hooks *left,
                            const struct slip_engine *engine, const struct slip_perm *p, uint32_t r,
@@ -95,7 +110,7 @@ static slip_status prepare(struct collector *collector, struct slip_hooks *left,
     *left = hooks ? *hooks : (struct slip_hooks){.threads = 1};
     if (left->memory) {
         left->memory = bytes + 1 < (double)left->memory ? left->memory - (uint64_t)bytes : 1;
-        status = engine->accepts(p, r, left, err);
+        status = accept_beside(bytes, left, engine, p, r, err);
     }
     if (status == SLIP_OK && bytes >= (double)SIZE_MAX)
         status = slip_fail(err, SLIP_LIMIT, "about %.3g results are too many for a list", count);
