@@ -118,9 +118,9 @@ SLIP_API slip_status slip_check_engines(const mpz_t distinct, const struct slip_
 /* ---- sizes known beforehand ---- */
 
 /*
- * An estimate of U_r, for sizing tables and memory: the least of (n+r)!, V_r(n) and, for r <= 255
- * where it is positive, the ceiling B_r(n), which has U_r(p) <= B_r(n) for every p (proved for r <=
- * 2, a conjecture beyond: never rely on it as a bound).
+ * An estimate of U_r, for sizing tables and memory: the least of (n+r)!, V_r(n) and, where it can
+ * be had (ceiling.h) and is positive, the ceiling B_r(n), which has U_r(p) <= B_r(n) for every p
+ * (proved for r <= 2, a conjecture beyond: never rely on it as a bound).
  */
 SLIP_API double slip_count_estimate(uint32_t n, uint32_t r);
 
