@@ -60,6 +60,11 @@ SLIP_API const struct slip_engine *const *slip_engine_list(size_t *count);
 /* Level by level through the hashed store. n + r <= 255. */
 extern SLIP_API const struct slip_engine slip_engine_store;
 
+/* Every result once through its first embedding, without a store: constant memory, n + r <= 255.
+ * visit hands over the results depth first: by the gap, then the value, of the leftmost point
+ * outside the first embedding, then of the next one, and so on. */
+extern SLIP_API const struct slip_engine slip_engine_canonical;
+
 /*
  * By the ceiling, the staircase intervals and, for r = 3, the triple couplings (slipcase/ceiling.h,
  * staircase.h, triple.h): r <= 3 and any length up to 2^29, in time that is linear for r <= 2 and

@@ -146,7 +146,7 @@ static void cross_check_notices(void **state)
     assert_int_equal(wrong.count(distinct, &p, 2, NULL, NULL), SLIP_OK);
     assert_int_equal(slip_check_engines(distinct, &wrong, &p, 2, NULL, NULL, &err), SLIP_DIFFERS);
     assert_non_null(strstr(err.message, "wrong counts 209 results"));
-    assert_non_null(strstr(err.message, "store counts 208"));
+    assert_non_null(strstr(err.message, " counts 208"));
     assert_int_equal(slip_check_row(distinct, &p, 2, NULL, &err), SLIP_DIFFERS);
     slip_perm_clear(&p);
     mpz_clear(distinct);

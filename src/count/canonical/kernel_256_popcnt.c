@@ -1,0 +1,4 @@
+/* Compiled for machines that count bits in one instruction. */
+#define SLIP_CANONICAL_BITS 256
+#define SLIP_CANONICAL_KERNEL slip_canonical_kernel_256_popcnt
+#include "count/canonical/kernel.h"
