@@ -19,6 +19,7 @@ struct slip_hooks {
     void (*progress)(void *context, double done, double all);
     uint64_t memory;  /* bytes that one call may hold at once; 0: no limit */
     unsigned threads; /* 0: as many as there are processors */
+    bool no_jumps;    /* the formula for r = 3 passes over no even stretch (slipcase/triple.h) */
 };
 
 /* SLIP_INTERRUPTED (with its message) if the hook says so, else SLIP_OK. */

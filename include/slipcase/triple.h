@@ -41,13 +41,19 @@ struct slip_triple {
 typedef slip_status (*slip_triple_visit)(void *context, const struct slip_triple *triple,
                                          struct slip_error *err);
 
+/*
+ * The functions below scan p from every position. Where a permutation goes on evenly for long, in
+ * position and in value, they pass over the stretch. That nothing is lost so is verified by many
+ * comparisons, not proved; with hooks->no_jumps every step is taken, which is the slow check.
+ */
+
 enum { SLIP_TRIPLE_LONGEST = 1 << 29 }; /* the largest n */
 
 /*
  * Hands over every canonical triple coupling once, from one thread: those found in p by their first
  * position, then those found in its inverse. Memory as slip_triple_memory says for one thread;
- * SLIP_LIMIT beyond n = SLIP_TRIPLE_LONGEST and when hooks->memory does not allow it. Time is
- * nearly linear in n on most permutations, quadratic at worst on those met so far.
+ * SLIP_LIMIT beyond n = SLIP_TRIPLE_LONGEST and when hooks->memory does not allow it. Time was
+ * nearly linear in n on all families tried; without jumps it is quadratic on some.
  */
 SLIP_API slip_status slip_triple_each(const struct slip_perm *p, slip_triple_visit visit,
                                       void *context, const struct slip_hooks *hooks,

@@ -19,6 +19,10 @@
 struct board {
     const uint32_t *value;    /* by position */
     const uint32_t *position; /* by value */
+    /* Where a table does not go on evenly, read at every first, second or third place: bit x of
+     * breaks[table][distance - 1] says that t[x] - t[x - distance] is not t[x - distance] -
+     * t[x - 2 distance], or that these do not exist; table 0 is value, 1 is position. */
+    const uint64_t *breaks[2][3];
     uint32_t n;
 };
 
@@ -35,16 +39,61 @@ struct chain {
     uint32_t owed; /* the last position of an element passed before the last step */
 };
 
+/* A stretch of the window whose elements were taken at once, all `waiting` open chains stepping in
+ * turn; nothing is written down for them one by one. */
+struct jump {
+    uint32_t next, count; /* taken: next .. next + count - 1 */
+    uint32_t waiting;
+    uint8_t queue[3];   /* the chains in turn */
+    uint32_t length[3]; /* elements of each of these before */
+};
+
+enum { SCAN_JUMPS = 12 }; /* the most jumps in one window */
+
+/* Room for one scan; both tables have n + 2 places. */
+struct scratch {
+    uint32_t *image; /* by position, of the elements sent: key */
+    uint32_t *mark;  /* by position, of the elements taken: 4 * index in its chain + chain */
+};
+
 /* Three chains, numbered as they open: a pair of complements of a result. */
 struct coupling {
     const struct board *board;
-    const uint32_t *mark; /* by position in the window: 4 * index in its chain + chain */
-    uint32_t from, to;    /* positions of the window: from .. to - 1 */
+    const struct scratch *scratch;
+    const struct jump *jump;
+    uint32_t jumps;
+    uint32_t from, to; /* positions of the window: from .. to - 1 */
     struct chain chain[3];
     uint8_t closing[3]; /* the chains in the order of their new points */
     /* before[a][b], a < b: the points of a, its new one included, left of the first one of b */
     uint32_t before[3][3];
 };
+
+/* Where an element that has been sent goes. */
+static inline uint32_t coupling_image(const struct coupling *c, uint32_t position)
+{
+    for (uint32_t k = 0; k < c->jumps; k++) {
+        const struct jump *jump = &c->jump[k];
+        if (position - (jump->next - jump->waiting) < jump->count)
+            return 2 * c->board->value[position + jump->waiting];
+    }
+    return c->scratch->image[position];
+}
+
+/* The chain of an element of the window, and its index there. */
+static inline uint32_t coupling_chain(const struct coupling *c, uint32_t position, uint32_t *index)
+{
+    for (uint32_t k = 0; k < c->jumps; k++) {
+        const struct jump *jump = &c->jump[k];
+        uint32_t ahead = position - jump->next;
+        if (ahead < jump->count) {
+            *index = jump->length[ahead % jump->waiting] + ahead / jump->waiting;
+            return jump->queue[ahead % jump->waiting];
+        }
+    }
+    *index = c->scratch->mark[position] / 4;
+    return c->scratch->mark[position] % 4;
+}
 
 /* What coupling_judge finds out. */
 struct judged {
@@ -88,12 +137,7 @@ enum {
     SCAN_NO_CUT = 2,   /* stopping where the shift can end */
     SCAN_NO_START = 4, /* a first element with a sure bond to its right */
     SCAN_NO_WAIT = 8,  /* a passed element that no open chain can reach */
-};
-
-/* Room for one scan; both tables have n + 2 places. */
-struct scratch {
-    uint32_t *image; /* by position: key */
-    uint32_t *mark;
+    SCAN_NO_JUMP = 16, /* passing over even stretches: all others are proved, this is not */
 };
 
 /*

@@ -21,9 +21,9 @@ static int64_t points_before(const struct coupling *c, uint32_t a, uint32_t b)
         if (u == 0 || u > c->board->n)
             break;
         uint32_t q = c->board->position[u];
-        if (q < c->from || q >= c->to || c->mark[q] % 4 != a)
+        uint32_t index;
+        if (q < c->from || q >= c->to || coupling_chain(c, q, &index) != a)
             continue;
-        uint32_t index = c->mark[q] / 4;
         bool beyond = chain->sign > 0 ? chain->key > 2 * v : chain->key < 2 * v;
         if (index + 1 == chain->length && !beyond)
             break;

@@ -2,6 +2,7 @@
 #include "slipcase/triple.h"
 
 #include <stdlib.h>
+#include <string.h>
 #ifdef _OPENMP
 #include <omp.h>
 #endif
@@ -9,8 +10,10 @@
 #include "formula/board.h"
 #include "formula/triples.h"
 
-/* The two tables of a board and, for each thread, two of scratch. */
+/* One piece of memory: the breaks of a board, its two tables and, for each thread, two of scratch.
+ */
 struct tables {
+    uint64_t *breaks;
     uint32_t *memory;
     struct board board;
     size_t places; /* of one table */
@@ -18,7 +21,24 @@ struct tables {
 
 double slip_triple_memory(uint32_t n, unsigned threads)
 {
-    return 2.0 * sizeof(uint32_t) * ((double)n + 2) * (1.0 + threads);
+    return 2.0 * sizeof(uint32_t) * ((double)n + 2) * (1.0 + threads) +
+           6.0 * sizeof(uint64_t) * (n / 64 + 1);
+}
+
+/* Fills the six sets of breaks. */
+static void mark_breaks(struct board *board, uint64_t *memory)
+{
+    size_t words = board->n / 64 + 1;
+    for (uint32_t set = 0; set < 6; set++, memory += words) {
+        const uint32_t *at = set < 3 ? board->value : board->position;
+        uint32_t distance = set % 3 + 1;
+        memset(memory, 0, words * sizeof *memory);
+        for (uint32_t x = 0; x <= board->n; x++)
+            if (x <= 2 * distance ||
+                at[x] - at[x - distance] != at[x - distance] - at[x - 2 * distance])
+                memory[x / 64] |= (uint64_t)1 << (x % 64);
+        board->breaks[set / 3][distance - 1] = memory;
+    }
 }
 
 static slip_status tables_new(struct tables *t, const struct slip_perm *p, unsigned threads,
@@ -31,17 +51,19 @@ static slip_status tables_new(struct tables *t, const struct slip_perm *p, unsig
     slip_status status = slip_hooks_afford(hooks, bytes, "finding the triple couplings", err);
     if (status != SLIP_OK)
         return status;
-    t->memory = malloc((size_t)bytes);
-    if (!t->memory)
+    t->breaks = malloc((size_t)bytes);
+    if (!t->breaks)
         return slip_fail_memory(err, (uint64_t)bytes);
     t->places = (size_t)p->n + 2;
+    t->memory = (uint32_t *)(t->breaks + 6 * ((size_t)p->n / 64 + 1));
     uint32_t *value = t->memory, *position = value + t->places;
     value[0] = position[0] = value[p->n + 1] = position[p->n + 1] = 0;
     for (uint32_t i = 1; i <= p->n; i++) {
         value[i] = p->at[i - 1];
         position[p->at[i - 1]] = i;
     }
-    t->board = (struct board){value, position, p->n};
+    t->board = (struct board){.value = value, .position = position, .n = p->n};
+    mark_breaks(&t->board, t->breaks);
     return SLIP_OK;
 }
 
@@ -56,6 +78,11 @@ static void turn(struct board *board)
     const uint32_t *value = board->value;
     board->value = board->position;
     board->position = value;
+    for (uint32_t k = 0; k < 3; k++) {
+        const uint64_t *breaks = board->breaks[0][k];
+        board->breaks[0][k] = board->breaks[1][k];
+        board->breaks[1][k] = breaks;
+    }
 }
 
 /* ---- one after another ---- */
@@ -89,6 +116,11 @@ static void tell(struct slip_triple *triple, const struct coupling *c, const str
     }
 }
 
+static unsigned without(const struct slip_hooks *hooks)
+{
+    return hooks && hooks->no_jumps ? SCAN_NO_JUMP : 0;
+}
+
 static bool visit_one(void *context, const struct coupling *coupling)
 {
     struct visiting *v = context;
@@ -104,19 +136,21 @@ static bool visit_one(void *context, const struct coupling *coupling)
 slip_status slip_triple_each(const struct slip_perm *p, slip_triple_visit visit, void *context,
                              const struct slip_hooks *hooks, struct slip_error *err)
 {
-    struct tables t = {.memory = NULL};
+    struct tables t = {.breaks = NULL};
     slip_status status = tables_new(&t, p, 1, hooks, err);
+    if (status != SLIP_OK)
+        return status;
     struct scratch scratch = scratch_of(&t, 0);
     for (int inverse = 0; inverse <= 1 && status == SLIP_OK; inverse++, turn(&t.board)) {
         struct visiting v = {visit, context, inverse, SLIP_OK, err};
         for (uint32_t from = 1; from <= p->n && status == SLIP_OK; from++) {
-            if (!scan_from(&t.board, &scratch, from, 0, visit_one, &v))
+            if (!scan_from(&t.board, &scratch, from, without(hooks), visit_one, &v))
                 status = v.status;
             if (status == SLIP_OK && from % 256 == 0)
                 status = slip_hooks_poll(hooks, err);
         }
     }
-    free(t.memory);
+    free(t.breaks);
     return status;
 }
 
@@ -164,12 +198,12 @@ static unsigned threads_of(const struct slip_perm *p, const struct slip_hooks *h
 #endif
 }
 
-slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned without,
+slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned left_out,
                           const struct slip_hooks *hooks, struct slip_error *err)
 {
     enum { PIECE = 64 };
     unsigned threads = threads_of(p, hooks);
-    struct tables t = {.memory = NULL};
+    struct tables t = {.breaks = NULL};
     slip_status status = tables_new(&t, p, threads, hooks, err);
     if (status != SLIP_OK)
         return status;
@@ -185,7 +219,7 @@ slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned w
             now = status;
             for (uint32_t k = 0; k < PIECE && now == SLIP_OK; k++)
                 if (piece * PIECE + k < p->n)
-                    scan_from(&t.board, &scratch, piece * PIECE + k + 1, without, count_one,
+                    scan_from(&t.board, &scratch, piece * PIECE + k + 1, left_out, count_one,
                               &tally);
             sum += tally.count;
 #pragma omp critical(slip_triple_hooks)
@@ -197,7 +231,7 @@ slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned w
             }
         }
     }
-    free(t.memory);
+    free(t.breaks);
     *count = sum;
     return status;
 }
@@ -205,5 +239,5 @@ slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned w
 slip_status slip_triple_count(uint64_t *count, const struct slip_perm *p,
                               const struct slip_hooks *hooks, struct slip_error *err)
 {
-    return triples_count(count, p, 0, hooks, err);
+    return triples_count(count, p, without(hooks), hooks, err);
 }

@@ -5,7 +5,7 @@
 
 #include "slipcase/triple.h"
 
-slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned without,
+slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned left_out,
                           const struct slip_hooks *hooks, struct slip_error *err);
 
 #endif

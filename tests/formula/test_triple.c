@@ -99,7 +99,8 @@ static void does_not_depend_on_the_way(void **state)
 {
     (void)state;
     static const unsigned without[] = {SCAN_NO_JOIN, SCAN_NO_CUT, SCAN_NO_START, SCAN_NO_WAIT,
-                                       SCAN_NO_JOIN | SCAN_NO_CUT | SCAN_NO_START | SCAN_NO_WAIT};
+                                       SCAN_NO_JOIN | SCAN_NO_CUT | SCAN_NO_START | SCAN_NO_WAIT |
+                                           SCAN_NO_JUMP};
     struct slip_random random = {5};
     struct slip_perm p, q;
     slip_perm_init(&p);
@@ -112,6 +113,10 @@ static void does_not_depend_on_the_way(void **state)
             assert_int_equal(triples(&p, without[k]), count);
         assert_int_equal(slip_symmetry_apply(&q, &p, 1 + t % 7, NULL), SLIP_OK);
         assert_int_equal(triples(&q, 0), count);
+    }
+    for (uint32_t t = 0; t < (is_long() ? 6000 : 120); t++) {
+        shape_make(&p, 70 + shape_below(&random, is_long() ? 400 : 160), t % SHAPES, &random);
+        assert_int_equal(triples(&p, 0), triples(&p, SCAN_NO_JUMP));
     }
     struct slip_hooks hooks = {.threads = 3};
     for (uint32_t kind = 0; kind < SHAPES; kind++) {
