@@ -43,7 +43,8 @@ static slip_status count_watched(mpz_t distinct, uint32_t n, uint32_t r, bool id
 {
     struct slip_perm p;
     struct slip_random random = {3};
-    struct slip_hooks hooks = {watch, interrupted, progress, 0, threads};
+    struct slip_hooks hooks = {
+        .context = watch, .interrupted = interrupted, .progress = progress, .threads = threads};
     slip_perm_init(&p);
     assert_int_equal(identity ? slip_perm_identity(&p, n, NULL)
                               : slip_random_perm(&p, n, &random, NULL),
@@ -121,7 +122,7 @@ static void visit_stops_when_interrupted(void **state)
     slip_perm_init(&p);
     for (int multiplicities = 0; multiplicities <= 1; multiplicities++) {
         struct watch watch = {0};
-        struct slip_hooks hooks = {&watch, interrupted, NULL, 0, 1};
+        struct slip_hooks hooks = {.context = &watch, .interrupted = interrupted, .threads = 1};
         struct digest digest = {0};
         assert_int_equal(slip_perm_identity(&p, 12, NULL), SLIP_OK);
         watch.stop_at = seconds() + 0.2;
