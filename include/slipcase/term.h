@@ -38,14 +38,14 @@ SLIP_API slip_status slip_variables_parse(struct slip_variables *variables, size
                                           const char *text, size_t length, struct slip_error *err);
 
 /* Gives the value of a parameter of the row at hand; false when it has none of that name. */
-typedef bool (*slip_parameter)(void *context, const char *name, mpz_t value);
+typedef bool (*slip_parameter_lookup)(void *context, const char *name, mpz_t value);
 
 /*
  * values[i] = variable i of this permutation. parameter (may be NULL: there are none) is asked
  * for parameters, with its context; SLIP_USAGE for one that is missing.
  */
 SLIP_API slip_status slip_variables_measure(mpz_t *values, const struct slip_variables *variables,
-                                            const struct slip_perm *p, slip_parameter parameter,
+                                            const struct slip_perm *p, slip_parameter_lookup parameter,
                                             void *context, const struct slip_hooks *hooks,
                                             struct slip_error *err);
 

@@ -106,7 +106,7 @@ slip_status slip_variables_parse(struct slip_variables *variables, size_t *index
 }
 
 static slip_status measure_parameter(mpz_t value, const struct slip_variable *variable,
-                                     slip_parameter parameter, void *context,
+                                     slip_parameter_lookup parameter, void *context,
                                      struct slip_error *err)
 {
     struct slip_text name;
@@ -122,7 +122,7 @@ static slip_status measure_parameter(mpz_t value, const struct slip_variable *va
 }
 
 slip_status slip_variables_measure(mpz_t *values, const struct slip_variables *variables,
-                                   const struct slip_perm *p, slip_parameter parameter,
+                                   const struct slip_perm *p, slip_parameter_lookup parameter,
                                    void *context, const struct slip_hooks *hooks,
                                    struct slip_error *err)
 {

@@ -1,4 +1,5 @@
 #include "slipcase/fit.h"
+#include "slipcase/number.h"
 
 static void rows(struct slip_text *text, uint64_t count, const char *what)
 {
@@ -52,17 +53,6 @@ void slip_fit_verdict(struct slip_text *text, const struct slip_fit *fit)
         slip_text_string(text, ": a conjecture");
 }
 
-/* Appends an integer. */
-static void integer(struct slip_text *text, const mpz_t z)
-{
-    size_t most = mpz_sizeinbase(z, 10) + 2;
-    if (!slip_text_reserve(text, most))
-        return;
-    mpz_get_str(text->data + text->length, 10, z);
-    while (text->data[text->length])
-        text->length++;
-}
-
 /* Appends |coefficient| * name, without a factor 1. */
 static void summand(struct slip_text *text, const mpq_t coefficient, const struct slip_term *term)
 {
@@ -72,10 +62,10 @@ static void summand(struct slip_text *text, const mpq_t coefficient, const struc
     bool one = !mpz_cmp_ui(size, 1) && !mpz_cmp_ui(mpq_denref(coefficient), 1);
     bool constant = term->count == 0;
     if (!one || constant)
-        integer(text, size);
+        slip_text_integer(text, size);
     if (mpz_cmp_ui(mpq_denref(coefficient), 1)) {
         slip_text_char(text, '/');
-        integer(text, mpq_denref(coefficient));
+        slip_text_integer(text, mpq_denref(coefficient));
     }
     if (!one && !constant)
         slip_text_char(text, '*');

@@ -1,5 +1,4 @@
-#include <stdlib.h>
-
+#include "slipcase/number.h"
 #include "slipcase/report.h"
 #include "slipcase/saved.h"
 
@@ -52,27 +51,21 @@ static void put_bool(struct pen *pen, const char *name, bool value)
     slip_text_string(pen->out, value ? "true" : "false");
 }
 
-/* A rational in lowest terms, or an integer, as a string. */
+/* A rational or an integer, as a string. */
 static void put_rational(struct pen *pen, const char *name, const mpq_t value)
 {
     key(pen, name);
-    size_t most = mpz_sizeinbase(mpq_numref(value), 10) + mpz_sizeinbase(mpq_denref(value), 10) + 3;
     slip_text_char(pen->out, '"');
-    if (slip_text_reserve(pen->out, most)) {
-        mpq_get_str(pen->out->data + pen->out->length, 10, value);
-        while (pen->out->data[pen->out->length])
-            pen->out->length++;
-    }
+    slip_text_rational(pen->out, value);
     slip_text_char(pen->out, '"');
 }
 
 static void put_integer(struct pen *pen, const char *name, const mpz_t value)
 {
-    mpq_t q;
-    mpq_init(q);
-    mpq_set_z(q, value);
-    put_rational(pen, name, q);
-    mpq_clear(q);
+    key(pen, name);
+    slip_text_char(pen->out, '"');
+    slip_text_integer(pen->out, value);
+    slip_text_char(pen->out, '"');
 }
 
 /* A list of terms with their coefficients; those that are 0 are left out on demand. */

@@ -7,6 +7,7 @@
 
 #include "core/chars.h"
 #include "slipcase/insertion.h"
+#include "slipcase/number.h"
 #include "source/fields.h"
 #include "source/lines.h"
 
@@ -197,12 +198,10 @@ static slip_status check_number(const struct slip_data *data, size_t which, cons
     if (status == SLIP_OK && mpz_cmp(z, expected)) {
         struct slip_text text;
         slip_text_init(&text);
-        size_t digits = mpz_sizeinbase(expected, 10) + 1;
-        if (slip_text_reserve(&text, digits))
-            mpz_get_str(text.data, 10, expected);
+        slip_text_integer(&text, expected);
         status = slip_text_ok(&text, err);
         if (status == SLIP_OK)
-            status = fail_in(data, which, digits <= 100 ? text.data : "another number", err);
+            status = fail_in(data, which, text.length <= 100 ? text.data : "another number", err);
         slip_text_clear(&text);
     }
     mpz_clear(z);
