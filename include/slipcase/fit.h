@@ -45,7 +45,7 @@ struct slip_fit {
     uint64_t missed;      /* of rows: not met */
     uint64_t held_missed; /* of held_out: not met */
     bool exact;           /* every sample is met, fitted and held out */
-    bool enough;          /* rows > rank: else the fitted rows are met whatever they are */
+    bool enough;          /* rows > terms: fewer rows may be met whatever their figures are */
     struct slip_solution solution;
     struct slip_miss worst[SLIP_FIT_WORST]; /* by absolute residual, largest first, then index */
     size_t worst_count;

@@ -9,5 +9,7 @@ extern const struct command command_insert;
 extern const struct command command_delete;
 extern const struct command command_contains;
 extern const struct command command_statistics;
+extern const struct command command_fit;
+extern const struct command command_predict;
 
 #endif

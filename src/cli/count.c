@@ -47,25 +47,6 @@ struct counting {
     const char **cells;
 };
 
-/* Whose row it was goes before the message. */
-static slip_status name_row(slip_status status, const struct slip_row *row, struct slip_error *err)
-{
-    if (status == SLIP_OK || status == SLIP_INTERRUPTED || !err || !err->message[0])
-        return status;
-    struct slip_text perm;
-    slip_text_init(&perm);
-    slip_perm_write(&perm, row->perm);
-    char message[sizeof err->message];
-    memcpy(message, err->message, sizeof message);
-    size_t shown = perm.length; /* a long one is cut between elements */
-    while (shown > 60 || (shown < perm.length && perm.data[shown] != ' '))
-        shown--;
-    slip_fail(err, status, "%.*s%s with r = %u: %.400s", (int)shown, slip_text_get(&perm),
-              shown < perm.length ? " ..." : "", row->r, message);
-    slip_text_clear(&perm);
-    return status;
-}
-
 static slip_status show(struct counting *counting, struct slip_row *row,
                         const struct slip_item *item, struct slip_error *err)
 {
@@ -141,7 +122,7 @@ static slip_status count_held(struct counting *counting, struct slip_error *err)
     slip_status status = slip_rows_count(rows, count, counting->engine, row_done, counting,
                                          &counting->batch->work.hooks, &failed, err);
     if (status != SLIP_OK && failed < count)
-        name_row(status, &rows[failed], err);
+        counting_name_row(status, &rows[failed], err);
     for (size_t i = 0; i < count; i++)
         slip_row_clear(&rows[i]);
     free(rows);

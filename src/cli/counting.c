@@ -66,3 +66,22 @@ int counting_fits(const struct call *call, const struct slip_engine *engine,
              engine ? "this engine takes" : "the engines take", most);
     return SLIP_LIMIT;
 }
+
+slip_status counting_name_row(slip_status status, const struct slip_row *row,
+                              struct slip_error *err)
+{
+    if (status == SLIP_OK || status == SLIP_INTERRUPTED || !err || !err->message[0])
+        return status;
+    struct slip_text perm;
+    slip_text_init(&perm);
+    slip_perm_write(&perm, row->perm);
+    char message[sizeof err->message];
+    memcpy(message, err->message, sizeof message);
+    size_t shown = perm.length; /* a long one is cut between elements */
+    while (shown > 60 || (shown < perm.length && perm.data[shown] != ' '))
+        shown--;
+    slip_fail(err, status, "%.*s%s with r = %u: %.400s", (int)shown, slip_text_get(&perm),
+              shown < perm.length ? " ..." : "", row->r, message);
+    slip_text_clear(&perm);
+    return status;
+}

@@ -4,7 +4,7 @@
 /* -r and --engine: what every command that counts or lists results reads. */
 
 #include "cli/values.h"
-#include "slipcase/engine.h"
+#include "slipcase/rows.h"
 #include "slipcase/source.h"
 
 extern const struct option_group counting_options;
@@ -22,5 +22,9 @@ int counting_engine(const struct call *call, const struct slip_engine **engine);
  * known beforehand: 0, or 3 after a message. */
 int counting_fits(const struct call *call, const struct slip_engine *engine,
                   const struct slip_source *source, uint32_t r);
+
+/* Puts the permutation and r of a row that failed before the message; returns the status. */
+slip_status counting_name_row(slip_status status, const struct slip_row *row,
+                              struct slip_error *err);
 
 #endif

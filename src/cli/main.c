@@ -9,8 +9,8 @@
 #include "cli/message.h"
 
 static const struct command *const commands[] = {
-    &command_count,  &command_list,     &command_insert,
-    &command_delete, &command_contains, &command_statistics,
+    &command_count,    &command_list,       &command_insert, &command_delete,
+    &command_contains, &command_statistics, &command_fit,    &command_predict,
 };
 enum { COMMANDS = sizeof commands / sizeof *commands };
 

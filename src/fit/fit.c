@@ -87,7 +87,7 @@ static slip_status solve(struct slip_fits *fits, struct slip_samples *samples,
         status = sum_up(&sums, fits, samples, plan, hooks, err);
     for (size_t i = 0; status == SLIP_OK && i < fits->count; i++) {
         status = slip_normal_solve(&fits->items[i].solution, &sums.normals[i], hooks, err);
-        fits->items[i].enough = fits->items[i].rows > fits->items[i].solution.rank;
+        fits->items[i].enough = fits->items[i].rows > plan->terms->count;
     }
     sums_close(&sums);
     return status;

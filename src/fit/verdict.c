@@ -41,8 +41,8 @@ void slip_fit_verdict(struct slip_text *text, const struct slip_fit *fit)
     if (!fit->enough) {
         slip_text_string(text, "too few rows: ");
         rows(text, fit->rows, "");
-        slip_text_format(text, " can always be met by %zu independent term%s", fit->solution.rank,
-                         fit->solution.rank == 1 ? "" : "s");
+        slip_text_format(text, " for %zu term%s", fit->solution.terms,
+                         fit->solution.terms == 1 ? "" : "s");
         held_out(text, fit);
         return;
     }

@@ -244,8 +244,7 @@ static void test_groups(void **state)
                    "exact on 5 rows, 1 held-out row predicted exactly: a conjecture");
     expect_formula(&desk.terms, &desk.fits.items[1], "-3 - 3/2*n^2 + 3/2*n^3");
     assert_false(desk.fits.items[5].enough); /* 654321 alone */
-    expect_verdict(&desk.fits.items[5],
-                   "too few rows: 1 row can always be met by 1 independent term, no row held out");
+    expect_verdict(&desk.fits.items[5], "too few rows: 1 row for 4 terms, no row held out");
     desk_close(&desk);
 }
 
@@ -265,9 +264,8 @@ static void test_verdicts(void **state)
         {{.rows = 7, .held_out = 2, .missed = 3, .held_missed = 0, .enough = true},
          "not exact: misses 3 of 7 rows and 0 of 2 held-out rows"},
         {{.rows = 7, .missed = 7, .enough = true}, "not exact: misses 7 of 7 rows"},
-        {{.rows = 2, .held_out = 1, .held_missed = 1, .solution = {.rank = 2}},
-         "too few rows: 2 rows can always be met by 2 independent terms, but misses 1 of 1 "
-         "held-out row"},
+        {{.rows = 2, .held_out = 1, .held_missed = 1, .solution = {.terms = 3}},
+         "too few rows: 2 rows for 3 terms, but misses 1 of 1 held-out row"},
     };
     for (size_t i = 0; i < sizeof cases / sizeof *cases; i++)
         expect_verdict(&cases[i].fit, cases[i].verdict);
