@@ -45,9 +45,11 @@ static int run(struct call *call)
     if (!code)
         code = fitting.data ? fit_data(&fitting) : fit_count(&fitting);
     bool incomplete = code == SLIP_DATA && fitting.batch.keep_going;
-    if (!code || incomplete) {
-        int shown = fit_show(&fitting);
-        code = shown ? shown : code;
+    int shown = !code || incomplete ? fit_show(&fitting) : code;
+    if (shown) { /* nothing is written behind a message */
+        slip_report_free(fitting.batch.report);
+        fitting.batch.report = NULL;
+        code = shown;
     }
     code = batch_end(&fitting.batch, code);
     fitting_clear(&fitting);

@@ -4,6 +4,7 @@
 
 #include "cli/counting.h"
 #include "cli/fitting.h"
+#include "cli/item_value.h"
 #include "cli/message.h"
 #include "core/size.h"
 #include "slipcase/rows.h"
@@ -123,8 +124,8 @@ static slip_status hold(void *context, const struct slip_item *item, struct slip
     if (status == SLIP_OK && !held->values.at)
         status = slip_matrix_shape(&held->values, 1, variables->count, err);
     if (status == SLIP_OK)
-        status = slip_variables_measure(held->values.at, variables, &item->perm, NULL, NULL,
-                                        &counter->fitting->batch.work.hooks, err);
+        status = slip_variables_measure(held->values.at, variables, &item->perm, item_parameter,
+                                        (void *)item, &counter->fitting->batch.work.hooks, err);
     if (status != SLIP_OK)
         return status;
     held->is_class = item->is_class;

@@ -110,9 +110,15 @@ static slip_status recount(struct fitting *fitting, struct fit_job *job,
     return status;
 }
 
+/* A parameter stands in a column of its own. */
 static bool column(void *context, const char *name, mpz_t value)
 {
-    return slip_data_integer(context, name, value);
+    struct slip_text title;
+    slip_text_init(&title);
+    slip_text_format(&title, "param(%s)", name);
+    bool found = slip_data_integer(context, slip_text_get(&title), value);
+    slip_text_clear(&title);
+    return found;
 }
 
 static slip_status take_row(struct fitting *fitting, struct slip_data *data,

@@ -110,15 +110,9 @@ static slip_status weigh(struct fitting *fitting, struct fit_job *job, const str
     fitting->only_classes = fitting->only_classes && is_class;
     if (!job->doubled || fitting->only_classes)
         return SLIP_OK;
-    struct slip_text text;
-    slip_text_init(&text);
-    slip_perm_write(&text, perm);
-    status = slip_fail(err, SLIP_USAGE,
-                       "--weights orbit needs at most one permutation of each class, and up to "
-                       "%.200s%s there are two of one",
-                       slip_text_get(&text), text.length > 200 ? " ..." : "");
-    slip_text_clear(&text);
-    return status;
+    return slip_fail(err, SLIP_USAGE,
+                     "--weights orbit needs at most one permutation of each class, and this is not "
+                     "the first of its class");
 }
 
 slip_status fit_add(struct fitting *fitting, struct fit_job *job, const struct slip_perm *perm,

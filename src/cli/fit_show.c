@@ -1,4 +1,5 @@
 /* slipcase fit: what is written. */
+#include <stdio.h>
 #include <string.h>
 
 #include "cli/fit_table.h"
@@ -272,10 +273,14 @@ int fit_show(struct fitting *fitting)
     struct slip_error err = SLIP_ERROR_NONE;
     slip_status status = SLIP_OK;
     if (fitting->count == 0)
-        status = slip_fail(&err, SLIP_DATA, "there are no rows to fit");
+        status = slip_fail(&err, SLIP_DATA, "%s",
+                           fitting->data ? "the file has no rows with this r"
+                                         : "there are no rows to fit");
     if (status == SLIP_OK)
         status = set_columns(fitting, &err);
     for (size_t i = 0; status == SLIP_OK && i < fitting->count; i++) {
+        struct work *work = &fitting->batch.work;
+        snprintf(work->label, sizeof work->label, "fitting r = %u", fitting->jobs[i].r);
         status = fit_one(fitting, &fitting->jobs[i], &err);
         int code = output_pass(&fitting->batch.output);
         if (code)

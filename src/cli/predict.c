@@ -8,6 +8,7 @@
 #include "cli/batch.h"
 #include "cli/commands.h"
 #include "cli/counting.h"
+#include "cli/item_value.h"
 #include "cli/message.h"
 #include "cli/sources.h"
 #include "slipcase/algebra.h"
@@ -158,8 +159,8 @@ static slip_status predict(void *context, const struct slip_item *item, struct s
     mpz_t none;
     mpz_init(none);
     slip_status status =
-        slip_variables_measure(predicting->values.at, &saved->variables, &item->perm, NULL, NULL,
-                               &predicting->batch.work.hooks, err);
+        slip_variables_measure(predicting->values.at, &saved->variables, &item->perm,
+                               item_parameter, (void *)item, &predicting->batch.work.hooks, err);
     for (size_t i = 0; status == SLIP_OK && i < saved->count; i++) {
         if (!wanted(predicting, i))
             continue;
@@ -251,8 +252,8 @@ static int run(struct call *call)
         code = batch_run(&predicting.batch, predict, &predicting);
     if (predicting.unknown) {
         work_hide(&predicting.batch.work);
-        remark(call, "%llu rows are of a group that the file has no fit for",
-               (unsigned long long)predicting.unknown);
+        remark(call, "%llu row%s of a group that the file has no fit for",
+               (unsigned long long)predicting.unknown, predicting.unknown == 1 ? " is" : "s are");
     }
     code = batch_end(&predicting.batch, code);
     slip_saved_clear(&predicting.saved);
