@@ -2,6 +2,15 @@
 
 #include <stdio.h>
 
+bool slip_is_plain(const char *text)
+{
+    enum { LONGEST = 60 };
+    size_t length = 0;
+    while (text[length] >= ' ' && text[length] < 0x7F && length <= LONGEST)
+        length++;
+    return !text[length] && length <= LONGEST;
+}
+
 uint32_t slip_char_span(const char *text, size_t length)
 {
     const unsigned char *at = (const unsigned char *)text;

@@ -22,6 +22,9 @@ static inline bool slip_is_letter(char c)
     return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
 }
 
+/* Whether a text can stand in a message as it is: printable ASCII, and not long. */
+bool slip_is_plain(const char *text);
+
 /* The bytes of the UTF-8 character at the beginning of the text (length >= 1), 1 for anything that
  * is not one. */
 uint32_t slip_char_span(const char *text, size_t length);

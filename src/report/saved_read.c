@@ -195,10 +195,12 @@ static slip_status read_members(struct line *line, bool *seen, struct slip_error
         size_t k = 0;
         while (k < KEYS && strcmp(keys[k].name, slip_text_get(&line->key)))
             k++;
-        if (k == KEYS || seen[k])
-            return slip_fail_at(err, SLIP_DATA, line->json.at, 1, "the key \"%.40s\" is %s",
-                                slip_text_get(&line->key),
-                                k == KEYS ? "not one of a saved fit" : "there twice");
+        if (k == KEYS)
+            return slip_fail_at(err, SLIP_DATA, line->json.at, 1,
+                                "the key before this is not one of a saved fit");
+        if (seen[k])
+            return slip_fail_at(err, SLIP_DATA, line->json.at, 1, "the key \"%s\" is there twice",
+                                keys[k].name);
         seen[k] = true;
         status = keys[k].read(line, err);
     }

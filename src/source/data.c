@@ -170,9 +170,13 @@ static slip_status fail_in(const struct slip_data *data, size_t which, const cha
                            struct slip_error *err)
 {
     const struct field *field = &data->fields.items[data->place[which]];
-    return slip_fail_at(err, SLIP_DATA, field->column, field->length ? (uint32_t)field->length : 1,
-                        "%s is \"%.60s\", expected %s", known[which].name, value_of(data, which),
-                        expected);
+    const char *value = value_of(data, which);
+    uint32_t span = field->length ? (uint32_t)field->length : 1;
+    if (!slip_is_plain(value))
+        return slip_fail_at(err, SLIP_DATA, field->column, span, "expected %s for %s", expected,
+                            known[which].name);
+    return slip_fail_at(err, SLIP_DATA, field->column, span, "%s is \"%s\", expected %s",
+                        known[which].name, value, expected);
 }
 
 /* z = the number in this column: digits, nothing else. */
@@ -254,6 +258,22 @@ static slip_status check_row(const struct slip_data *data, struct slip_data_row 
     return status;
 }
 
+static slip_status read_engine(const struct slip_data *data, struct slip_data_row *row,
+                               struct slip_error *err)
+{
+    slip_text_reset(&row->engine);
+    const char *name = value_of(data, ENGINE);
+    if (!name)
+        return SLIP_OK;
+    for (const char *c = name; *c; c++)
+        if (!slip_is_letter(*c) && !slip_is_digit(*c) && *c != '_' && *c != '-')
+            return fail_in(data, ENGINE, "the name of an engine", err);
+    if (strlen(name) != data->fields.items[data->place[ENGINE]].length)
+        return fail_in(data, ENGINE, "the name of an engine", err);
+    slip_text_string(&row->engine, name);
+    return slip_text_ok(&row->engine, err);
+}
+
 static slip_status read_row(struct slip_data *data, struct slip_data_row *row,
                             struct slip_error *err)
 {
@@ -268,10 +288,7 @@ static slip_status read_row(struct slip_data *data, struct slip_data_row *row,
         status = check_row(data, row, err);
     if (status != SLIP_OK)
         return status;
-    slip_text_reset(&row->engine);
-    if (value_of(data, ENGINE))
-        slip_text_string(&row->engine, value_of(data, ENGINE));
-    return slip_text_ok(&row->engine, err);
+    return read_engine(data, row, err);
 }
 
 slip_status slip_data_next(struct slip_data *data, struct slip_data_row *row, bool *more,

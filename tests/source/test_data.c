@@ -126,6 +126,7 @@ static void test_caught(void **state)
         {HEADER "\"1 3 2,3,1,10,16,16\n", 2, 1},
         {HEADER "\"1 3 2\" ,3,1,10,16,16\n", 2, 8},
         {HEADER "1 \"3\" 2,3,1,10,16,16\n", 2, 3},
+        {"permutation,r,distinct,engine\n1,1,2,a b\n", 2, 7},
     };
     for (size_t i = 0; i < sizeof cases / sizeof *cases; i++) {
         size_t rows;
