@@ -45,9 +45,9 @@ typedef bool (*slip_parameter_lookup)(void *context, const char *name, mpz_t val
  * for parameters, with its context; SLIP_USAGE for one that is missing.
  */
 SLIP_API slip_status slip_variables_measure(mpz_t *values, const struct slip_variables *variables,
-                                            const struct slip_perm *p, slip_parameter_lookup parameter,
-                                            void *context, const struct slip_hooks *hooks,
-                                            struct slip_error *err);
+                                            const struct slip_perm *p,
+                                            slip_parameter_lookup parameter, void *context,
+                                            const struct slip_hooks *hooks, struct slip_error *err);
 
 /* ---- terms ---- */
 

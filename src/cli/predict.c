@@ -69,7 +69,7 @@ static slip_status load(struct predicting *predicting, const char *path, struct 
     if (status == SLIP_OK) {
         status = slip_saved_read(&predicting->saved, slip_text_get(&text), text.length, err);
         if (status != SLIP_OK && err && strlen(path) < sizeof err->file)
-            strcpy(err->file, path);
+            memcpy(err->file, path, strlen(path) + 1);
     }
     slip_text_clear(&text);
     return status;
@@ -194,7 +194,7 @@ static int set_columns(struct predicting *predicting)
         columns[count++] = (struct slip_column){"distinct", SLIP_CELL_BIG};
     if (predicting->batch.names)
         columns[count++] = (struct slip_column){"name", SLIP_CELL_TEXT};
-    return batch_columns(&predicting->batch, columns, count);
+    return batch_columns_and_parameters(&predicting->batch, columns, count);
 }
 
 /* -r chooses among the fits of the file; without it all of them are used. */
@@ -206,7 +206,7 @@ static int choose_r(struct predicting *predicting, const struct call *call)
     bool some = false;
     for (size_t i = 0; i < predicting->saved.count; i++)
         some = some || wanted(predicting, i);
-    if (!code && !some)
+    if (!code && token && !some)
         code = misuse(call, token->index, token->offset, strlen(token->value),
                       "the file has no fit for this r");
     return code;
@@ -275,8 +275,9 @@ const struct command command_predict = {
                 "slipcase predict fit.json --random 20 --length 8 --seed 1 --against count\n",
     .details =
         "Columns: permutation, n, r, group (when the fits are for groups), predicted (empty\n"
-        "when the file has no fit for the group), with --against count also distinct, and\n"
-        "name when the input has any. -r chooses among the fits of the file (default: all).\n"
+        "when the file has no fit for the group), with --against count also distinct, name\n"
+        "when the input has any, and the parameters of families.\n"
+        "-r chooses among the fits of the file (default: all of them).\n"
         "--against count ends with exit code 5 at the first row that differs.\n",
     .groups = groups,
     .run = run,
