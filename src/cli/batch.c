@@ -64,12 +64,12 @@ slip_status batch_row(struct batch *batch, const char *const *cells, struct slip
 }
 
 /* Rows that are ready go out before a message about what follows them. A header without rows
- * is for the end of a run that found nothing wrong. */
+ * is for the end of a run that found nothing wrong. A summary has no report before its end. */
 static int settle(struct batch *batch, bool header)
 {
     struct slip_error err = SLIP_ERROR_NONE;
     work_hide(&batch->work);
-    if ((header || batch->work.rows > 0) &&
+    if (batch->report && (header || batch->work.rows > 0) &&
         slip_report_end(batch->report, &batch->output.text, &err) != SLIP_OK)
         return complain_error(batch->call, &err);
     return output_flush(&batch->output);
@@ -126,13 +126,12 @@ int batch_run(struct batch *batch, batch_work work, void *context)
 
 int batch_end(struct batch *batch, int code)
 {
-    bool ran = batch->report && (code == 0 || code == SLIP_DATA);
-    if (ran) {
+    if (batch->report && (code == 0 || code == SLIP_DATA || code == SLIP_INTERRUPTED)) {
         int last = settle(batch, code == 0);
         if (last)
             code = last;
     }
-    if (ran && (code == 0 || code == SLIP_DATA))
+    if (batch->report && (code == 0 || code == SLIP_DATA))
         work_end(&batch->work, batch->call, batch->format == SLIP_TABLE);
     work_hide(&batch->work);
     slip_report_free(batch->report);

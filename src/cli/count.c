@@ -141,13 +141,16 @@ static slip_status hold(void *context, const struct slip_item *item, struct slip
         return status;
     slip_text_reset(&place->name);
     slip_text_string(&place->name, slip_text_get(&item->name));
+    status = slip_text_ok(&place->name, err);
+    if (status != SLIP_OK)
+        return status;
     place->is_class = item->is_class;
     memcpy(place->parameters, item->parameters, sizeof place->parameters);
     place->parameter_count = item->parameter_count;
     counting->held++;
     if (counting->held == CHUNK || (uint64_t)item->perm.n > 1000000)
         return count_held(counting, err);
-    return slip_text_ok(&place->name, err);
+    return SLIP_OK;
 }
 
 static int begin_report(struct counting *counting)
@@ -201,10 +204,12 @@ static int run(struct call *call)
     counting->summarise = call_flag(call, "--summary");
     slip_summary_init(&counting->summary);
     int code = begin(counting, call);
+    bool began = code == 0;
     batch.work.total *= (double)counting->r.to - counting->r.from + 1;
-    if (!code)
+    if (began)
         code = batch_run(&batch, hold, counting);
-    if (counting->summarise && (code == 0 || code == SLIP_DATA || code == SLIP_INTERRUPTED)) {
+    if (began && counting->summarise &&
+        (code == 0 || code == SLIP_DATA || code == SLIP_INTERRUPTED)) {
         int shown = summary_show(&batch, &counting->summary);
         code = shown ? shown : code;
     }
