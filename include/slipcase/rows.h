@@ -31,7 +31,8 @@ typedef slip_status (*slip_row_done)(void *context, struct slip_row *row, struct
 /*
  * Counts every row with the given engine, or with the one that slip_engine_choose finds when it
  * is NULL, and hands them to `done` in order. Many small rows are shared out among threads, each
- * with its part of the memory; large ones are counted one after another, each with all threads.
+ * with its part of the memory (a row that this is too little for is counted with all of it, and
+ * those after it too); large ones are counted one after another, each with all threads.
  * Values and order do not depend on the number of threads. The first row that fails ends the
  * batch with its status; rows before it have been handed over, and *failed (may be NULL) is its
  * index.

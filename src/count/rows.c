@@ -50,11 +50,13 @@ static slip_status count_row(struct slip_row *row, const struct slip_engine *eng
     return status;
 }
 
-static slip_status one_by_one(struct slip_row *rows, size_t count, const struct slip_engine *engine,
-                              slip_row_done done, void *context, const struct slip_hooks *hooks,
-                              size_t *failed, struct slip_error *err)
+/* The rows first..count-1. */
+static slip_status one_by_one(struct slip_row *rows, size_t first, size_t count,
+                              const struct slip_engine *engine, slip_row_done done, void *context,
+                              const struct slip_hooks *hooks, size_t *failed,
+                              struct slip_error *err)
 {
-    for (size_t i = 0; i < count; i++) {
+    for (size_t i = first; i < count; i++) {
         slip_status status = count_row(&rows[i], engine, hooks, err);
         if (status == SLIP_OK)
             status = done(context, &rows[i], err);
@@ -80,13 +82,17 @@ static unsigned threads_for(const struct slip_row *rows, size_t count,
     return threads;
 }
 
+/* *refused: the failure is that of a row which its thread's part of the memory may have been too
+ * little for. */
 static slip_status shared_out(struct slip_row *rows, size_t count, const struct slip_engine *engine,
                               slip_row_done done, void *context, const struct slip_hooks *hooks,
-                              unsigned threads, size_t *failed, struct slip_error *err)
+                              unsigned threads, bool *refused, size_t *failed,
+                              struct slip_error *err)
 {
     struct slip_hooks part = hooks ? *hooks : (struct slip_hooks){0};
     part.threads = 1;
-    part.memory /= threads;
+    if (part.memory) /* 0 would be no limit */
+        part.memory = part.memory < threads ? 1 : part.memory / threads;
     part.progress = NULL; /* rows are the progress */
     slip_status result = SLIP_OK;
     int stop = 0; /* a row failed: later ones need not begin */
@@ -106,6 +112,7 @@ static slip_status shared_out(struct slip_row *rows, size_t count, const struct 
             /* A row that was skipped because a later one had failed first is counted now. */
             if (stopped)
                 status = count_row(&rows[i], engine, &part, &local);
+            *refused = status == SLIP_LIMIT;
             if (status == SLIP_OK)
                 status = done(context, &rows[i], &local);
             if (status != SLIP_OK) {
@@ -131,8 +138,14 @@ slip_status slip_rows_count(struct slip_row *rows, size_t count, const struct sl
         failed = &unused;
 #ifdef _OPENMP
     unsigned threads = threads_for(rows, count, hooks);
-    if (threads > 1)
-        return shared_out(rows, count, engine, done, context, hooks, threads, failed, err);
+    if (threads > 1) {
+        bool refused = false;
+        slip_status status =
+            shared_out(rows, count, engine, done, context, hooks, threads, &refused, failed, err);
+        if (refused) /* it and those after it have all of the memory, one at a time */
+            status = one_by_one(rows, *failed, count, engine, done, context, hooks, failed, err);
+        return status;
+    }
 #endif
-    return one_by_one(rows, count, engine, done, context, hooks, failed, err);
+    return one_by_one(rows, 0, count, engine, done, context, hooks, failed, err);
 }

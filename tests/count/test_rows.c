@@ -96,6 +96,41 @@ static void first_failure_ends_the_batch(void **state)
     }
 }
 
+/* Rows of which one, but not two, fit into the memory. */
+static void memory_for_one_row_is_enough(void **state)
+{
+    (void)state;
+    enum { SOME = 6, LENGTH = 9, R = 2 };
+    struct slip_row rows[SOME];
+    struct slip_perm p;
+    struct slip_hooks hooks = {.memory = 64};
+    slip_perm_init(&p);
+    assert_int_equal(slip_perm_identity(&p, LENGTH, NULL), SLIP_OK);
+    while (slip_engine_store.accepts(&p, R, &hooks, NULL) != SLIP_OK)
+        hooks.memory += hooks.memory / 8;
+    for (hooks.threads = 1; hooks.threads <= 3; hooks.threads++) {
+        size_t failed = SOME;
+        for (size_t i = 0; i < SOME; i++)
+            slip_row_init(&rows[i], &p, i < 2 ? 0 : R); /* the first rows need little */
+        struct seen seen = {.rows = rows, .stop_at = SOME};
+        assert_int_equal(
+            slip_rows_count(rows, SOME, &slip_engine_store, done, &seen, &hooks, &failed, NULL),
+            SLIP_OK);
+        assert_int_equal(seen.count, SOME);
+        /* One byte is too little for any row, and is no more than that for several threads. */
+        struct slip_hooks least = {.memory = 1, .threads = hooks.threads};
+        seen.count = 0;
+        assert_int_equal(
+            slip_rows_count(rows, SOME, &slip_engine_store, done, &seen, &least, &failed, NULL),
+            SLIP_LIMIT);
+        assert_int_equal(seen.count, 0);
+        assert_int_equal(failed, 0);
+        for (size_t i = 0; i < SOME; i++)
+            slip_row_clear(&rows[i]);
+    }
+    slip_perm_clear(&p);
+}
+
 static bool always(void *context)
 {
     (void)context;
@@ -208,6 +243,7 @@ int main(void)
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(threads_change_nothing),
         cmocka_unit_test(first_failure_ends_the_batch),
+        cmocka_unit_test(memory_for_one_row_is_enough),
         cmocka_unit_test(interruption_ends_the_batch),
         cmocka_unit_test(cross_check_notices),
         cmocka_unit_test(distributions_add_up),
