@@ -2,6 +2,7 @@
 
 #include <stdlib.h>
 
+#include "count/levels.h"
 #include "slipcase/insertion.h"
 #include "slipcase/store.h"
 
@@ -45,8 +46,8 @@ static slip_status step(struct slip_store **level, uint32_t length, const struct
     struct slip_store *next;
     struct slip_perm p;
     slip_perm_init(&p);
-    slip_status status =
-        slip_store_open(&next, length - 1, slip_store_size(*level), hooks ? hooks->memory : 0, err);
+    slip_status status = slip_store_open(&next, length - 1, slip_store_size(*level),
+                                         slip_levels_left(hooks, *level), err);
     uint64_t size = slip_store_size(*level), ordered;
     for (uint64_t i = 0; i < size && status == SLIP_OK; i++) {
         const uint64_t *key = slip_store_entry(*level, i, &ordered);
@@ -73,14 +74,28 @@ static int compare(const void *a, const void *b)
     return slip_perm_compare(&x->perm, &y->perm);
 }
 
-static slip_status take(struct slip_deletions *deletions, const struct slip_store *level,
-                        uint32_t length, uint64_t orders, struct slip_error *err)
+/* Whether the sorted list may be held beside the set that it is taken from. */
+static slip_status afford_list(const struct slip_store *level, uint32_t length,
+                               const struct slip_hooks *hooks, struct slip_error *err)
 {
+    enum { BLOCK = 16 }; /* what malloc adds to the elements of a permutation */
+    double each = sizeof(struct entry) + sizeof(struct slip_perm) + sizeof(uint64_t) +
+                  length * sizeof(uint32_t) + BLOCK;
+    double bytes = (double)slip_store_size(level) * each + (double)slip_store_bytes(level);
+    return slip_hooks_afford(hooks, bytes, "the list of what deletions leave", err);
+}
+
+static slip_status take(struct slip_deletions *deletions, const struct slip_store *level,
+                        uint32_t length, uint64_t orders, const struct slip_hooks *hooks,
+                        struct slip_error *err)
+{
+    slip_status status = afford_list(level, length, hooks, err);
+    if (status != SLIP_OK)
+        return status;
     size_t count = slip_store_size(level), filled = 0;
     struct entry *entries = calloc(count + 1, sizeof *entries);
     deletions->patterns = calloc(count + 1, sizeof *deletions->patterns);
     deletions->ways = calloc(count + 1, sizeof *deletions->ways);
-    slip_status status = SLIP_OK;
     if (!entries || !deletions->patterns || !deletions->ways)
         status = slip_fail_memory(err, count * (sizeof *entries + sizeof *deletions->patterns));
     for (; filled < count && status == SLIP_OK; filled++) {
@@ -116,7 +131,7 @@ slip_status slip_deletions_collect(struct slip_deletions *deletions, const struc
                          SLIP_PACKED_LONGEST);
     uint64_t key[(SLIP_PACKED_LONGEST + 7) / 8], orders = 1;
     struct slip_store *level = NULL;
-    slip_status status = slip_store_open(&level, p->n, 1, hooks ? hooks->memory : 0, err);
+    slip_status status = slip_store_open(&level, p->n, 1, slip_levels_left(hooks, NULL), err);
     slip_packed_from(key, p);
     if (status == SLIP_OK)
         status = slip_store_add(level, key, 1, NULL, err);
@@ -127,7 +142,7 @@ slip_status slip_deletions_collect(struct slip_deletions *deletions, const struc
         orders *= t + 1;
     }
     if (status == SLIP_OK)
-        status = take(deletions, level, p->n - r, orders, err);
+        status = take(deletions, level, p->n - r, orders, hooks, err);
     slip_store_close(level);
     if (status != SLIP_OK)
         slip_deletions_clear(deletions);

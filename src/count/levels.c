@@ -1,5 +1,6 @@
 #include "count/levels.h"
 
+#include <float.h>
 #include <stdio.h>
 #include <stdlib.h>
 
@@ -33,8 +34,9 @@ slip_status slip_levels_afford(const struct slip_perm *p, uint32_t r,
     double results = slip_count_estimate(p->n, r);
     if (results > UINT32_MAX)
         return slip_fail(err, SLIP_LIMIT,
-                         "about %.3g results for n = %u, r = %u; the store holds at most %u",
-                         results, p->n, r, UINT32_MAX);
+                         "%s %.3g results for n = %u, r = %u; the store holds at most %u",
+                         results > DBL_MAX ? "more than" : "about",
+                         results > DBL_MAX ? 1e308 : results, p->n, r, UINT32_MAX);
     double bytes = slip_store_estimate((uint32_t)length, results);
     if (r > 0) /* a level and the one before it are held at once */
         bytes += slip_store_estimate((uint32_t)length - 1, slip_count_estimate(p->n, r - 1));
@@ -43,8 +45,7 @@ slip_status slip_levels_afford(const struct slip_perm *p, uint32_t r,
     return slip_hooks_afford(hooks, bytes, purpose, err);
 }
 
-/* What the next level may hold beside the one before it. */
-static uint64_t memory_left(const struct slip_hooks *hooks, const struct slip_store *before)
+uint64_t slip_levels_left(const struct slip_hooks *hooks, const struct slip_store *before)
 {
     if (!hooks || !hooks->memory)
         return 0;
@@ -99,7 +100,7 @@ static slip_status climb(struct levels *levels, struct slip_store **store, uint3
 {
     struct slip_store *next;
     slip_status status = slip_store_open(&next, n + t, (uint64_t)slip_count_estimate(n, t),
-                                         memory_left(levels->hooks, *store), err);
+                                         slip_levels_left(levels->hooks, *store), err);
     if (status == SLIP_OK)
         status = feed(levels, next, *store, n + t - 1, err);
     slip_store_close(*store);
@@ -112,7 +113,7 @@ static slip_status begin(struct slip_store **store, const struct slip_perm *p,
                          const struct slip_hooks *hooks, struct slip_error *err)
 {
     uint64_t key[(SLIP_PACKED_LONGEST + 7) / 8];
-    slip_status status = slip_store_open(store, p->n, 1, memory_left(hooks, NULL), err);
+    slip_status status = slip_store_open(store, p->n, 1, slip_levels_left(hooks, NULL), err);
     if (status != SLIP_OK)
         return status;
     slip_packed_from(key, p);

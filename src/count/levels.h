@@ -8,6 +8,9 @@
 slip_status slip_levels_afford(const struct slip_perm *p, uint32_t r,
                                const struct slip_hooks *hooks, struct slip_error *err);
 
+/* Bytes that the next level may hold beside the one before it (NULL: none); 0: no limit. */
+uint64_t slip_levels_left(const struct slip_hooks *hooks, const struct slip_store *before);
+
 /*
  * *results = the set of the results of r insertions into p, the weight of each being the number of
  * insertion sequences that give it (r! times its multiplicity). Level t is built from level t-1 by

@@ -69,11 +69,44 @@ static void long_ones_and_limits(void **state)
     slip_perm_clear(&p);
 }
 
+/* Some memory is enough, and all that is less is refused with nothing left behind. */
+static void memory_is_respected(void **state)
+{
+    (void)state;
+    struct slip_perm p;
+    struct slip_deletions deletions;
+    struct slip_error err = SLIP_ERROR_NONE;
+    uint64_t refused = 0;
+    slip_perm_init(&p);
+    slip_deletions_init(&deletions);
+    given(&p, "2 1 4 3 6 5 8 7 10 9");
+    for (uint64_t memory = 1; memory <= 1 << 20; memory *= 2) {
+        struct slip_hooks hooks = {.memory = memory};
+        slip_status status = slip_deletions_collect(&deletions, &p, 4, &hooks, &err);
+        if (status == SLIP_OK) {
+            assert_int_equal(deletions.count,
+                             12); /* sums of 1 and 21 of length 6, without 123456 */
+            assert_true(memory > deletions.count * (6 * sizeof(uint32_t)));
+            continue;
+        }
+        assert_int_equal(status, SLIP_LIMIT);
+        assert_non_null(strstr(err.message, "would need about"));
+        assert_int_equal(deletions.count, 0);
+        assert_int_equal(refused + 1, memory); /* no more memory than this was enough */
+        refused = 2 * memory - 1;
+    }
+    assert_true(refused > 1000);
+    assert_int_equal(slip_deletions_collect(&deletions, &p, 4, NULL, NULL), SLIP_OK);
+    slip_deletions_clear(&deletions);
+    slip_perm_clear(&p);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(all_up_to_length_six),
         cmocka_unit_test(long_ones_and_limits),
+        cmocka_unit_test(memory_is_respected),
     };
     return cmocka_run_group_tests_name("count/deletion", tests, NULL, NULL);
 }
