@@ -2,6 +2,14 @@
 
 #include <string.h>
 
+slip_status cells_ok(const struct slip_text *const *cells, size_t count, struct slip_error *err)
+{
+    slip_status status = SLIP_OK;
+    for (size_t i = 0; i < count && status == SLIP_OK; i++)
+        status = slip_text_ok(cells[i], err);
+    return status;
+}
+
 slip_status cell_integer(struct slip_text *cell, const mpz_t value, struct slip_error *err)
 {
     size_t digits = mpz_sizeinbase(value, 10) + 2;

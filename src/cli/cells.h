@@ -9,6 +9,9 @@
 #include "slipcase/source.h"
 #include "slipcase/statistics.h"
 
+/* Whether all of these cells were written in full: SLIP_LIMIT when memory was short for one. */
+slip_status cells_ok(const struct slip_text *const *cells, size_t count, struct slip_error *err);
+
 /* Appends the value in decimal. */
 slip_status cell_integer(struct slip_text *cell, const mpz_t value, struct slip_error *err);
 

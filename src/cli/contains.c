@@ -3,6 +3,7 @@
 #include <string.h>
 
 #include "cli/batch.h"
+#include "cli/cells.h"
 #include "cli/commands.h"
 #include "cli/message.h"
 #include "cli/sources.h"
@@ -26,7 +27,7 @@ static slip_status search(void *context, const struct slip_item *item, struct sl
         return SLIP_OK;
     const struct slip_hooks *hooks = &searching->batch->work.hooks;
     bool found;
-    work_label(&searching->batch->work, &item->perm, searching->pattern.n);
+    work_label(&searching->batch->work, &item->perm, -1);
     slip_status status = slip_embedding_first(&found, searching->positions, &searching->pattern,
                                               &item->perm, hooks, err);
     if (status == SLIP_OK)
@@ -43,6 +44,11 @@ static slip_status search(void *context, const struct slip_item *item, struct sl
     slip_text_reset(&searching->number);
     slip_text_string(&searching->number, digits);
     free(digits);
+    const struct slip_text *written[] = {&searching->permutation, &searching->pattern_text,
+                                         &searching->number, &searching->first};
+    status = cells_ok(written, sizeof written / sizeof *written, err);
+    if (status != SLIP_OK)
+        return status;
     bool json = searching->batch->format == SLIP_JSON;
     const char *cells[] = {slip_text_get(&searching->permutation),
                            slip_text_get(&searching->pattern_text),

@@ -1,5 +1,6 @@
 /* slipcase delete: what is left when r elements are deleted. */
 #include "cli/batch.h"
+#include "cli/cells.h"
 #include "cli/commands.h"
 #include "cli/counting.h"
 #include "cli/message.h"
@@ -40,7 +41,11 @@ static slip_status delete (void *context, const struct slip_item *item, struct s
         const char *cells[] = {slip_text_get(&deleting->permutation),
                                slip_text_get(&deleting->number), slip_text_get(&deleting->pattern),
                                slip_text_get(&deleting->ways), slip_text_get(&item->name)};
-        status = batch_row(deleting->batch, cells, err);
+        const struct slip_text *written[] = {&deleting->permutation, &deleting->number,
+                                             &deleting->pattern, &deleting->ways};
+        status = cells_ok(written, sizeof written / sizeof *written, err);
+        if (status == SLIP_OK)
+            status = batch_row(deleting->batch, cells, err);
         deleting->batch->work.rows++;
     }
     slip_deletions_clear(&deletions);

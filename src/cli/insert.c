@@ -2,6 +2,7 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "cli/cells.h"
 #include "cli/commands.h"
 #include "cli/marked.h"
 #include "cli/message.h"
@@ -44,7 +45,8 @@ static slip_status show(struct slip_report *report, struct output *output, bool 
     else
         slip_perm_write(&result, p);
     const char *cells[] = {slip_text_get(&number), slip_text_get(&text), slip_text_get(&result)};
-    slip_status status = slip_text_ok(&result, err);
+    const struct slip_text *written[] = {&number, &text, &result};
+    slip_status status = cells_ok(written, sizeof written / sizeof *written, err);
     if (status == SLIP_OK)
         status = slip_report_row(report, cells, &output->text, err);
     slip_text_clear(&number);

@@ -3,6 +3,7 @@
 #include <string.h>
 
 #include "cli/batch.h"
+#include "cli/cells.h"
 #include "cli/commands.h"
 #include "cli/counting.h"
 #include "cli/marked.h"
@@ -56,15 +57,24 @@ struct listing {
     struct slip_text permutation, number, text, multiplicity, sequence;
 };
 
+/* SLIP_OK when every cell of a row was written in full. */
+static slip_status written(const struct listing *listing, struct slip_error *err)
+{
+    const struct slip_text *cells[] = {&listing->permutation, &listing->number, &listing->text,
+                                       &listing->multiplicity, &listing->sequence};
+    return cells_ok(cells, sizeof cells / sizeof *cells, err);
+}
+
 /* The complement of the first embedding of p in the result: positions[0..r-1], ascending. */
 static slip_status complement(uint32_t *positions, const struct slip_perm *p,
-                              const struct slip_perm *result, struct slip_error *err)
+                              const struct slip_perm *result, const struct slip_hooks *hooks,
+                              struct slip_error *err)
 {
     uint32_t *chosen = malloc(((size_t)p->n + 1) * sizeof *chosen);
     if (!chosen)
         return slip_fail_memory(err, ((uint64_t)p->n + 1) * sizeof *chosen);
     bool found;
-    slip_status status = slip_embedding_first(&found, chosen, p, result, NULL, err);
+    slip_status status = slip_embedding_first(&found, chosen, p, result, hooks, err);
     for (uint32_t i = 0, next = 0, out = 0; status == SLIP_OK && i < result->n; i++) {
         if (next < p->n && chosen[next] == i)
             next++;
@@ -86,7 +96,7 @@ static slip_status write_witness(struct listing *listing, const struct slip_perm
     if (!positions || !sequence)
         status = slip_fail_memory(err, ((uint64_t)r + 1) * sizeof *sequence);
     if (status == SLIP_OK)
-        status = complement(positions, p, &listing->result, err);
+        status = complement(positions, p, &listing->result, &listing->batch->work.hooks, err);
     if (status == SLIP_OK)
         status = slip_insertion_sequence(sequence, &listing->result, positions, r, err);
     if (status == SLIP_OK) {
@@ -114,6 +124,8 @@ static slip_status show(struct listing *listing, const uint64_t *key, uint32_t l
         slip_text_number(&listing->multiplicity, multiplicity);
     if (status == SLIP_OK && listing->witness)
         status = write_witness(listing, &listing->item->perm, err);
+    if (status == SLIP_OK)
+        status = written(listing, err);
     if (status != SLIP_OK)
         return status;
     const char *cell[MOST] = {[PERMUTATION] = slip_text_get(&listing->permutation),
@@ -192,8 +204,10 @@ static slip_status list_distribution(struct listing *listing, const struct slip_
                                slip_text_get(&listing->number),
                                slip_text_get(&listing->multiplicity), slip_text_get(&listing->text),
                                slip_text_get(&listing->item->name)};
+        status = written(listing, err);
+        if (status == SLIP_OK)
+            status = batch_row(listing->batch, cells, err);
         listing->batch->work.rows++;
-        status = batch_row(listing->batch, cells, err);
     }
     slip_distribution_clear(&found);
     return status;

@@ -6,6 +6,7 @@
 
 #include "cli/commands.h"
 #include "cli/help.h"
+#include "cli/memory.h"
 #include "cli/message.h"
 
 static const struct command *const commands[] = {
@@ -49,6 +50,7 @@ static void hold_standard_streams(void)
 int main(int argc, char **argv)
 {
     hold_standard_streams();
+    memory_for_numbers();
     struct call call = {.argc = argc, .argv = argv};
     if (argc < 2)
         return misuse_missing(&call, "no command given");

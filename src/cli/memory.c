@@ -1,7 +1,11 @@
 #include "cli/memory.h"
 
+#include <gmp.h>
 #include <stdio.h>
+#include <stdlib.h>
 #include <sys/resource.h>
+
+#include "cli/message.h"
 
 static uint64_t least(uint64_t a, uint64_t b)
 {
@@ -41,4 +45,34 @@ uint64_t memory_available(void)
     if (getrlimit(RLIMIT_AS, &space) == 0 && space.rlim_cur != RLIM_INFINITY)
         bytes = least(bytes, space.rlim_cur);
     return bytes == UINT64_MAX ? (uint64_t)1 << 30 : bytes;
+}
+
+/* GMP cannot hand a failure back; by default it would abort. */
+static void *or_end(void *block)
+{
+    if (!block)
+        _Exit(complain_memory());
+    return block;
+}
+
+static void *allocate(size_t bytes)
+{
+    return or_end(malloc(bytes));
+}
+
+static void *reallocate(void *block, size_t before, size_t bytes)
+{
+    (void)before;
+    return or_end(realloc(block, bytes));
+}
+
+static void release(void *block, size_t bytes)
+{
+    (void)bytes;
+    free(block);
+}
+
+void memory_for_numbers(void)
+{
+    mp_set_memory_functions(allocate, reallocate, release);
 }

@@ -7,4 +7,8 @@
  * of the control group or of the address space when that is less. 1 GiB when nothing tells. */
 uint64_t memory_available(void);
 
+/* Lets the program end with SLIP_LIMIT, after a message, when memory is short for an exact number.
+ */
+void memory_for_numbers(void);
+
 #endif
