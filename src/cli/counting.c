@@ -24,9 +24,12 @@ int counting_range(const struct call *call, struct range *r)
 int counting_single(const struct call *call, uint32_t *r)
 {
     const struct token *token = call_option(call, "-r");
-    uint64_t number = 1;
-    int code = token ? value_number(call, token, 0, UINT32_MAX, &number) : 0;
-    *r = (uint32_t)number;
+    struct range range;
+    int code = counting_range(call, &range);
+    if (!code && strchr(token ? token->value : "", '.'))
+        code = misuse(call, token->index, token->offset, strlen(token->value),
+                      "-r takes a single number here, not '%s'", token->value);
+    *r = code ? 0 : range.from;
     return code;
 }
 

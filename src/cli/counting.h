@@ -9,7 +9,7 @@
 
 extern const struct option_group counting_options;
 
-/* The value of -r (1..1 when left out); 0 or 2. */
+/* The value of -r (1..1 when left out); 0, 2 or 3. */
 int counting_range(const struct call *call, struct range *r);
 
 /* The value of -r as one number. */

@@ -6,28 +6,31 @@
 
 #include "cli/message.h"
 
-/* The decimal digits at *text, moved past; false without any or above most. */
-static bool digits(const char **text, uint64_t most, uint64_t *number)
+/* The decimal digits at *text, moved past; false without any. *beyond is set when they are more
+ * than most, and left as it is otherwise. */
+static bool digits(const char **text, uint64_t most, uint64_t *number, bool *beyond)
 {
     const char *start = *text;
     uint64_t value = 0;
     for (; **text >= '0' && **text <= '9'; ++*text) {
         uint64_t digit = (uint64_t)(**text - '0');
         if (digit > most || value > (most - digit) / 10)
-            return false;
-        value = 10 * value + digit;
+            *beyond = true;
+        else
+            value = 10 * value + digit;
     }
     *number = value;
-    return *text > start && value <= most;
+    return *text > start;
 }
 
 int value_number(const struct call *call, const struct token *token, uint64_t least, uint64_t most,
                  uint64_t *number)
 {
     const char *text = token->value;
-    if (digits(&text, most, number) && !*text && *number >= least)
+    bool beyond = false, good = digits(&text, most, number, &beyond) && !*text;
+    if (good && !beyond && *number >= least)
         return 0;
-    if (most == UINT64_MAX)
+    if (most == UINT64_MAX && !beyond)
         return misuse(call, token->index, token->offset, strlen(token->value),
                       "%s takes a number from %llu on, not '%s'", token->option->name,
                       (unsigned long long)least, token->value);
@@ -40,16 +43,22 @@ int value_range(const struct call *call, const struct token *token, struct range
 {
     const char *text = token->value;
     uint64_t from, to;
-    bool good = digits(&text, UINT32_MAX, &from);
+    bool beyond = false, good = digits(&text, UINT32_MAX, &from, &beyond);
     to = from;
     if (good && !strncmp(text, "..", 2)) {
         text += 2;
-        good = digits(&text, UINT32_MAX, &to);
+        good = digits(&text, UINT32_MAX, &to, &beyond);
     }
     if (!good || *text)
         return misuse(call, token->index, token->offset, strlen(token->value),
                       "%s takes a number or a range such as 1..3, not '%s'", token->option->name,
                       token->value);
+    if (beyond) {
+        misuse(call, token->index, token->offset, strlen(token->value),
+               "%s takes numbers up to %u, not '%s'", token->option->name, UINT32_MAX,
+               token->value);
+        return SLIP_LIMIT;
+    }
     if (from > to)
         return misuse(call, token->index, token->offset, strlen(token->value),
                       "the range of %s runs backwards: %s", token->option->name, token->value);
@@ -63,7 +72,8 @@ int value_size(const struct call *call, const struct token *token, uint64_t *byt
     static const char letters[] = "KMGT";
     const char *text = token->value;
     unsigned shift = 0;
-    bool good = digits(&text, UINT64_MAX, bytes) && *bytes > 0;
+    bool beyond = false;
+    bool good = digits(&text, UINT64_MAX, bytes, &beyond) && !beyond && *bytes > 0;
     if (good && *text && strchr(letters, *text & ~0x20)) {
         shift = 10 * (unsigned)(strchr(letters, *text & ~0x20) - letters + 1);
         text++;

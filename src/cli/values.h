@@ -2,7 +2,7 @@
 #define CLI_VALUES_H
 
 /* Option values: numbers, ranges, sizes, words from a list. Each returns 0, or prints what is
- * wrong and returns 2. */
+ * wrong and returns 2, or 3 where it says so. */
 
 #include <stdint.h>
 
@@ -16,7 +16,7 @@ struct range {
 int value_number(const struct call *call, const struct token *token, uint64_t least, uint64_t most,
                  uint64_t *number);
 
-/* "N" or "A..B" with A <= B. */
+/* "N" or "A..B" with A <= B. Numbers of 2^32 and more are too large for anything (3). */
 int value_range(const struct call *call, const struct token *token, struct range *range);
 
 /* Bytes: a number, with K, M, G or T (powers of 1024; KiB and KB are the same) behind it. */
