@@ -106,7 +106,7 @@ static slip_status measure(void *context, const struct slip_item *item, struct s
     if (!item)
         return SLIP_OK;
     size_t count = 0;
-    work_label(&m->batch.work, &item->perm, 0);
+    work_label(&m->batch.work, &item->perm, -1);
     slip_text_reset(&m->permutation);
     slip_perm_write(&m->permutation, &item->perm);
     slip_status status = slip_text_ok(&m->permutation, err);

@@ -92,17 +92,18 @@ int work_begin(struct work *work, const struct call *call)
     return code;
 }
 
-void work_label(struct work *work, const struct slip_perm *perm, unsigned r)
+void work_label(struct work *work, const struct slip_perm *perm, int64_t r)
 {
     size_t used = 0;
     for (uint32_t i = 0; i < perm->n && used < 40; i++)
         used += (size_t)snprintf(work->label + used, sizeof work->label - used, "%s%u",
                                  i ? " " : "", perm->at[i]);
-    snprintf(work->label + used, sizeof work->label - used, "%s (r = %u)",
-             perm->n == 0 ? "()"
-             : used >= 40 ? " ..."
-                          : "",
-             r);
+    used += (size_t)snprintf(work->label + used, sizeof work->label - used, "%s",
+                             perm->n == 0 ? "()"
+                             : used >= 40 ? " ..."
+                                          : "");
+    if (r >= 0)
+        snprintf(work->label + used, sizeof work->label - used, " (r = %lld)", (long long)r);
     work->row_begun = clock_now();
     show(work, 0, 0);
 }
@@ -122,7 +123,7 @@ void work_end(struct work *work, const struct call *call, bool table)
         return;
     fprintf(stderr, "%.0f row%s in %.2f s", work->rows, work->rows == 1 ? "" : "s", seconds);
     if (work->results > 0)
-        fprintf(stderr, ", %.3g results, %.3g results a second", work->results,
-                work->results / (seconds > 1e-6 ? seconds : 1e-6));
+        fprintf(stderr, ", %.3g result%s, %.3g results a second", work->results,
+                work->results == 1 ? "" : "s", work->results / (seconds > 1e-6 ? seconds : 1e-6));
     fputc('\n', stderr);
 }

@@ -26,8 +26,8 @@ struct work {
  */
 int work_begin(struct work *work, const struct call *call);
 
-/* Names the row that is being worked on. */
-void work_label(struct work *work, const struct slip_perm *perm, unsigned r);
+/* Names the row that is being worked on; r is shown unless it is negative. */
+void work_label(struct work *work, const struct slip_perm *perm, int64_t r);
 
 /* Clears the progress line, so that rows or messages can be written. */
 void work_hide(struct work *work);
