@@ -95,4 +95,16 @@ SLIP_API slip_status slip_derivation_derive(struct slip_derivation *derivation,
                                             const struct slip_case *c,
                                             const struct slip_hooks *hooks, struct slip_error *err);
 
+/*
+ * The smallest witness of one subcase, with two different placements: *found and the witness
+ * (initialise it with slip_witness_init). SLIP_USAGE when there is no such subcase.
+ */
+SLIP_API slip_status slip_derivation_witness(struct slip_witness *witness, bool *found,
+                                             const struct slip_derivation *derivation,
+                                             size_t subcase, const struct slip_hooks *hooks,
+                                             struct slip_error *err);
+
+SLIP_API void slip_witness_init(struct slip_witness *witness);
+SLIP_API void slip_witness_clear(struct slip_witness *witness); /* idempotent */
+
 #endif

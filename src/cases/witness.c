@@ -82,34 +82,74 @@ static slip_status try_subcase(struct wanted *wanted, const struct slip_derivati
     return SLIP_OK;
 }
 
-static slip_status try_all(struct wanted *wanted, const struct slip_derivation *derivation,
-                           struct solver *solver, const struct slip_hooks *hooks,
-                           struct slip_error *err)
+/* Tries the realisable ones of the subcases begin..end-1. */
+static slip_status try_range(struct wanted *wanted, const struct slip_derivation *derivation,
+                             size_t begin, size_t end, struct solver *solver,
+                             const struct slip_hooks *hooks, struct slip_error *err)
 {
     slip_status status = SLIP_OK;
-    for (size_t i = 0; i < derivation->count && status == SLIP_OK; i++)
+    for (size_t i = begin; i < end && status == SLIP_OK; i++)
         if (derivation->subcases[i].realisable)
             status = try_subcase(wanted, derivation, i, solver, hooks, err);
     return status;
 }
 
-/* ---- the two witnesses ---- */
+static slip_status try_all(struct wanted *wanted, const struct slip_derivation *derivation,
+                           struct solver *solver, const struct slip_hooks *hooks,
+                           struct slip_error *err)
+{
+    return try_range(wanted, derivation, 0, derivation->count, solver, hooks, err);
+}
+
+/* ---- the smallest one ---- */
 
 /* Two placements are different when some column lies on a chain: the least witness with a column
  * in some strip of displacement other than 0. */
-static slip_status find_smallest(struct slip_derivation *derivation, struct solver *solver,
-                                 const struct slip_hooks *hooks, struct slip_error *err)
+static slip_status find_smallest(struct slip_witness *witness, bool *found,
+                                 const struct slip_derivation *derivation, size_t begin, size_t end,
+                                 struct solver *solver, const struct slip_hooks *hooks,
+                                 struct slip_error *err)
 {
-    struct wanted wanted = {.witness = &derivation->smallest};
+    struct wanted wanted = {.witness = witness};
     slip_status status = SLIP_OK;
     for (uint32_t s = 0; s <= 2 * derivation->name.r && status == SLIP_OK; s++) {
         wanted.columns = derivation->dx[s] ? 1u << s : 0;
         if (wanted.columns)
-            status = try_all(&wanted, derivation, solver, hooks, err);
+            status = try_range(&wanted, derivation, begin, end, solver, hooks, err);
     }
-    derivation->has_smallest = wanted.found;
+    *found = wanted.found;
+    if (status == SLIP_OK && wanted.found)
+        status = witness_build(witness, derivation, err);
     return status;
 }
+
+void slip_witness_init(struct slip_witness *witness)
+{
+    memset(witness, 0, sizeof *witness);
+}
+
+void slip_witness_clear(struct slip_witness *witness)
+{
+    slip_perm_clear(&witness->perm);
+    slip_witness_init(witness);
+}
+
+slip_status slip_derivation_witness(struct slip_witness *witness, bool *found,
+                                    const struct slip_derivation *derivation, size_t subcase,
+                                    const struct slip_hooks *hooks, struct slip_error *err)
+{
+    *found = false;
+    if (subcase >= derivation->count)
+        return slip_fail(err, SLIP_USAGE, "there are %zu subcases", derivation->count);
+    struct solver solver;
+    solver_init(&solver);
+    slip_status status =
+        find_smallest(witness, found, derivation, subcase, subcase + 1, &solver, hooks, err);
+    solver_clear(&solver);
+    return status;
+}
+
+/* ---- the full one ---- */
 
 /* The strips that hold something in some witness: all of displacement 0, and those for which a
  * search that asks for no other strip succeeds. */
@@ -144,18 +184,17 @@ static slip_status find_full(struct slip_derivation *derivation, struct solver *
             status = try_all(&wanted, derivation, solver, hooks, err);
     }
     derivation->has_full = wanted.found;
+    if (status == SLIP_OK && wanted.found)
+        status = witness_build(&derivation->full, derivation, err);
     return status;
 }
 
 slip_status derive_witnesses(struct slip_derivation *derivation, struct solver *solver,
                              const struct slip_hooks *hooks, struct slip_error *err)
 {
-    slip_status status = find_smallest(derivation, solver, hooks, err);
+    slip_status status = find_smallest(&derivation->smallest, &derivation->has_smallest, derivation,
+                                       0, derivation->count, solver, hooks, err);
     if (status == SLIP_OK)
         status = find_full(derivation, solver, hooks, err);
-    if (status == SLIP_OK && derivation->has_smallest)
-        status = witness_build(&derivation->smallest, derivation, err);
-    if (status == SLIP_OK && derivation->has_full)
-        status = witness_build(&derivation->full, derivation, err);
     return status;
 }
