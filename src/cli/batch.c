@@ -48,7 +48,7 @@ slip_status batch_row(struct batch *batch, const char *const *cells, struct slip
 {
     slip_status status = SLIP_OK;
     if (batch->parameters.count) {
-        status = parameters_cells(&batch->parameters, cells, batch->item, err);
+        status = parameters_cells(&batch->parameters, cells, &batch->item, err);
         cells = batch->parameters.cells;
     }
     if (status == SLIP_OK)
@@ -91,17 +91,15 @@ static int stop(struct batch *batch, const struct slip_error *err, slip_status s
 
 int batch_run(struct batch *batch, batch_work work, void *context)
 {
-    struct slip_item item;
-    slip_item_init(&item);
-    batch->item = &item;
+    struct slip_item *item = &batch->item;
     int bad = 0;
     bool more = true;
     slip_status status = SLIP_OK;
     struct slip_error err = SLIP_ERROR_NONE;
     while (more && status == SLIP_OK) {
-        slip_status read = slip_source_next(batch->source, &item, &more, &err);
+        slip_status read = slip_source_next(batch->source, item, &more, &err);
         if (read == SLIP_OK) {
-            status = work(context, more ? &item : NULL, &err);
+            status = work(context, more ? item : NULL, &err);
             continue;
         }
         struct slip_error why = err;
@@ -119,8 +117,6 @@ int batch_run(struct batch *batch, batch_work work, void *context)
         bad = complain_error(batch->call, &why);
         more = true;
     }
-    slip_item_clear(&item);
-    batch->item = NULL;
     return status == SLIP_OK ? bad : stop(batch, &err, status);
 }
 
@@ -136,6 +132,7 @@ int batch_end(struct batch *batch, int code)
     work_hide(&batch->work);
     slip_report_free(batch->report);
     parameters_clear(&batch->parameters);
+    slip_item_clear(&batch->item);
     slip_source_free(batch->source);
     output_clear(&batch->output);
     return code;

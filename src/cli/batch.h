@@ -19,9 +19,9 @@ struct batch {
     struct work work;
     struct slip_report *report;
     enum slip_format format;
-    bool names;                   /* some permutation in the files has a name */
-    bool keep_going;              /* bad lines do not end the run */
-    const struct slip_item *item; /* that the work is being done for */
+    bool names;            /* some permutation in the files has a name */
+    bool keep_going;       /* bad lines do not end the run */
+    struct slip_item item; /* the permutation that is worked on */
     struct parameter_columns parameters;
 };
 
