@@ -49,7 +49,8 @@ static slip_status delete (void *context, const struct slip_item *item, struct s
         deleting->batch->work.rows++;
     }
     slip_deletions_clear(&deletions);
-    return status;
+    struct slip_row row = {.perm = &item->perm, .r = deleting->r};
+    return counting_name_row(status, &row, err);
 }
 
 static int run(struct call *call)

@@ -213,11 +213,9 @@ static slip_status list_distribution(struct listing *listing, const struct slip_
     return status;
 }
 
-static slip_status list(void *context, const struct slip_item *item, struct slip_error *err)
+static slip_status list_item(struct listing *listing, const struct slip_item *item,
+                             struct slip_error *err)
 {
-    struct listing *listing = context;
-    if (!item)
-        return SLIP_OK;
     const struct slip_hooks *hooks = &listing->batch->work.hooks;
     const struct slip_engine *engine = listing->engine;
     work_label(&listing->batch->work, &item->perm, listing->r);
@@ -233,6 +231,15 @@ static slip_status list(void *context, const struct slip_item *item, struct slip
         return list_distribution(listing, engine, err);
     return listing->generated ? list_generated(listing, engine, err)
                               : list_sorted(listing, engine, err);
+}
+
+static slip_status list(void *context, const struct slip_item *item, struct slip_error *err)
+{
+    struct listing *listing = context;
+    if (!item)
+        return SLIP_OK;
+    struct slip_row row = {.perm = &item->perm, .r = listing->r};
+    return counting_name_row(list_item(listing, item, err), &row, err);
 }
 
 /* --columns: what is not shown is not worked out. */
