@@ -120,6 +120,11 @@ int batch_run(struct batch *batch, batch_work work, void *context)
     return status == SLIP_OK ? bad : stop(batch, &err, status);
 }
 
+int batch_show(struct batch *batch)
+{
+    return settle(batch, false);
+}
+
 int batch_end(struct batch *batch, int code)
 {
     if (batch->report && (code == 0 || code == SLIP_DATA || code == SLIP_INTERRUPTED)) {

@@ -45,6 +45,10 @@ typedef slip_status (*batch_work)(void *context, const struct slip_item *item,
  * that a command that gathers permutations can finish; also before a message about a bad line. */
 int batch_run(struct batch *batch, batch_work work, void *context);
 
+/* Writes the rows that are ready at once, also those of an unfinished table block; 0 or an exit
+ * code, after a message. */
+int batch_show(struct batch *batch);
+
 /* Writes what is held back, the closing line, and releases everything. Returns `code`, or what
  * went wrong at the end. */
 int batch_end(struct batch *batch, int code);

@@ -1,4 +1,5 @@
 /* slipcase count: how many different permutations come out. */
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 
@@ -103,6 +104,15 @@ static slip_status row_done(void *context, struct slip_row *row, struct slip_err
     return status;
 }
 
+/* The line that the permutation stands in, if it comes from a file. */
+static void name_line(const struct slip_item *item, struct slip_error *err)
+{
+    if (!item->file || !err->message[0])
+        return;
+    snprintf(err->file, sizeof err->file, "%s", item->file);
+    err->line = item->line;
+}
+
 /* Counts the permutations held, each with every r. */
 static slip_status count_held(struct counting *counting, struct slip_error *err)
 {
@@ -121,8 +131,10 @@ static slip_status count_held(struct counting *counting, struct slip_error *err)
     size_t failed = count;
     slip_status status = slip_rows_count(rows, count, counting->engine, row_done, counting,
                                          &counting->batch->work.hooks, &failed, err);
-    if (status != SLIP_OK && failed < count)
+    if (status != SLIP_OK && failed < count) {
         counting_name_row(status, &rows[failed], err);
+        name_line(&counting->items[failed / each], err);
+    }
     for (size_t i = 0; i < count; i++)
         slip_row_clear(&rows[i]);
     free(rows);
@@ -147,10 +159,18 @@ static slip_status hold(void *context, const struct slip_item *item, struct slip
     place->is_class = item->is_class;
     memcpy(place->parameters, item->parameters, sizeof place->parameters);
     place->parameter_count = item->parameter_count;
+    place->file = item->file;
+    place->line = item->line;
     counting->held++;
-    if (counting->held == CHUNK || (uint64_t)item->perm.n > 1000000)
-        return count_held(counting, err);
-    return SLIP_OK;
+    /* Looking ahead for names has read all of standard input; without that, who writes to it may
+     * wait for an answer. */
+    bool waiting =
+        item->file && !strcmp(item->file, "-") && call_flag(counting->batch->call, "--columns");
+    bool full = counting->held == CHUNK || item->perm.n > 1000000;
+    status = full || waiting ? count_held(counting, err) : SLIP_OK;
+    if (status == SLIP_OK && waiting)
+        status = (slip_status)batch_show(counting->batch);
+    return status;
 }
 
 static int begin_report(struct counting *counting)
