@@ -14,11 +14,13 @@ slip_status slip_canonical_poll(struct slip_canonical_control *control)
     int stop = atomic_load(&control->stop);
     if (stop != SLIP_OK || atomic_flag_test_and_set(&control->calling))
         return (slip_status)stop;
-    slip_status status = slip_hooks_poll(control->hooks, NULL);
+    stop = atomic_load(&control->stop); /* another worker may just have asked */
+    if (stop == SLIP_OK && slip_hooks_poll(control->hooks, NULL) != SLIP_OK) {
+        stop = SLIP_INTERRUPTED;
+        atomic_store(&control->stop, stop);
+    }
     atomic_flag_clear(&control->calling);
-    if (status != SLIP_OK)
-        atomic_store(&control->stop, status);
-    return status;
+    return (slip_status)stop;
 }
 
 /* One count: what is dealt out, and what comes back. */
