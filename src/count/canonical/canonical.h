@@ -38,6 +38,7 @@ struct slip_canonical_problem {
     uint8_t index[SLIP_CANONICAL_LONGEST]; /* the inverse */
     uint8_t run[SLIP_CANONICAL_LONGEST];   /* the last of consecutive values, all up or all down,
                                               from element i on */
+    uint8_t leap[SLIP_CANONICAL_LONGEST];  /* difference in value to element i + 1; 255: none */
     /* The earlier element with the nearest smaller (larger) value, plus one: 0 when there is no
      * smaller one, n + 1 when there is no larger one. */
     uint16_t lower[SLIP_CANONICAL_LONGEST], upper[SLIP_CANONICAL_LONGEST];

@@ -15,6 +15,8 @@
 
 #include "count/canonical/kernel_node.h"
 
+#include "count/canonical/kernel_report.h"
+
 #include "count/canonical/kernel_search.h"
 
 #include "count/canonical/kernel_count.h"

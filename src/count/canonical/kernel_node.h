@@ -47,6 +47,8 @@ struct slip_canonical_worker {
     int16_t *keys;         /* [n+2]: in [i+1] the key of the point that serves element i; as in C
                               for those not served yet; [0] and [n+1] below and above all */
     int reach;
+    bool slots_found; /* whether ... is filled for this node */
+    uint16_t slots[SLIP_CANONICAL_LONGEST + 2];
     struct wild wild[2];
     int reached;            /* C's point next to come when the present element's turn came */
     int hush_from, hush_to; /* new points may not serve the elements between, the last included */

@@ -25,90 +25,6 @@
  * by C's own way to serve it. E has caught up only beyond the last needed one.
  */
 
-static void fresh_add(worker *w, struct pair pair)
-{
-    w->work += w->fresh.count;
-    for (uint32_t i = 0; i < w->fresh.count; i++) {
-        struct pair *old = &w->fresh.at[i];
-        if (pair_key(old) == pair_key(&pair)) {
-            old->forbidden = mask_either(old->forbidden, pair.forbidden);
-            return;
-        }
-    }
-    pairs_push(w, &w->fresh, pair);
-}
-
-struct range {
-    int from, to;
-};
-
-/* The slots of the node that lie between the elements slot - 1 and slot of p. */
-static inline struct range slots_between(const struct node *node, unsigned slot)
-{
-    struct range range = {(int)slot, (int)slot};
-    for (unsigned t = 0; t < node->count; t++) {
-        range.from += node->points[t].slot < slot;
-        range.to += node->points[t].slot <= slot;
-    }
-    return range;
-}
-
-/* Whether any of them is allowed in this gap. */
-static inline bool allowed_between(const struct node *node, unsigned gap, unsigned slot)
-{
-    struct range range = slots_between(node, slot);
-    return !mask_empty(
-        mask_less(mask_span((unsigned)range.from, (unsigned)range.to), node->forbidden[gap]));
-}
-
-/* Narrows the range of a wildcard by the used points that share its slot of p, if d went into
- * slot `first` of the node; `first` above all values: not yet. */
-static void narrow(const worker *w, const struct wild *wild, unsigned first, struct range *range)
-{
-    const struct node *node = w->at;
-    const uint8_t *value = w->problem->value;
-    for (unsigned t = 0; t < node->count; t++) {
-        const struct point *point = &node->points[t];
-        if (point->serves < 0 || point->slot != wild->slot)
-            continue;
-        int now = point->value + (point->value >= first);
-        if (value[point->serves] < value[wild->serves]) {
-            if (range->from <= now)
-                range->from = now + 1;
-        } else if (range->to > now) {
-            range->to = now;
-        }
-    }
-}
-
-/* Adds the pairs of a complete E. */
-static void report(worker *w)
-{
-    const struct wild *d = &w->wild[0], *e = &w->wild[1];
-    const struct node *node = w->at;
-    const uint8_t *value = w->problem->value;
-    struct range first = slots_between(node, d->slot);
-    narrow(w, d, UINT32_MAX, &first);
-    for (int slot = first.from; slot <= first.to; slot++) {
-        struct range second = slots_between(node, e->slot);
-        second.from += d->slot < e->slot;
-        second.to += d->slot <= e->slot;
-        narrow(w, e, (unsigned)slot, &second);
-        if (d->slot == e->slot) {
-            if (value[d->serves] < value[e->serves])
-                second.from = second.from > slot ? second.from : slot + 1;
-            else
-                second.to = second.to < slot ? second.to : slot;
-        }
-        if (second.from > second.to)
-            continue;
-        struct mask slots = pair_effect(node, d->gap, (unsigned)slot, e->gap,
-                                        mask_span((unsigned)second.from, (unsigned)second.to));
-        if (!mask_empty(slots))
-            fresh_add(w, (struct pair){(uint8_t)d->gap, (uint8_t)slot, (uint8_t)e->gap, slots});
-    }
-}
-
 /* Whether element i may be served by a point with this key as far as the elements between the two
  * go; raises *needed to the last of these. */
 static inline bool within_reach(const worker *w, int i, int key, int *needed)
@@ -145,9 +61,9 @@ static bool misplaced(const worker *w, unsigned t, int i)
 
 /*
  * Serves the elements of p from i on, with C's points from c on and the inserted ones from t on;
- * `wilds` wildcards are used. Whether an E was found.
+ * `wilds` wildcards are used, not both.
  */
-static bool scan(worker *w, int i, int c, unsigned t, unsigned wilds, int needed);
+static void scan(worker *w, int i, int c, unsigned t, unsigned wilds, int needed);
 
 /* Whether the hush of an element that was removed (see hush()) forbids a new point for i. */
 static inline bool hushed(const worker *w, int i, int c)
@@ -156,26 +72,24 @@ static inline bool hushed(const worker *w, int i, int c)
 }
 
 /* Element i has been served, with C's points up to c passed: goes on with the next. */
-static bool served(worker *w, int i, int c, unsigned t, unsigned wilds, int key, int needed)
+static void served(worker *w, int i, int c, unsigned t, unsigned wilds, int key, int needed)
 {
     int reached = w->reached;
     w->keys[i + 1] = (int16_t)key;
     w->reached = c;
-    bool found = scan(w, i + 1, c, t, wilds, needed);
+    scan(w, i + 1, c, t, wilds, needed);
     w->reached = reached;
     w->keys[i + 1] = (int16_t)(2 * w->problem->value[i] + 1);
-    return found;
 }
 
 /* A new point serves element i: a hush that began here does not concern it. */
-static bool served_by_new(worker *w, int i, int c, unsigned t, unsigned wilds, int key, int needed)
+static void served_by_new(worker *w, int i, int c, unsigned t, unsigned wilds, int key, int needed)
 {
     int hush_to = w->hush_to;
     if (w->hush_from == i)
         w->hush_to = -1;
-    bool found = served(w, i, c, t, wilds, key, needed);
+    served(w, i, c, t, wilds, key, needed);
     w->hush_to = hush_to;
-    return found;
 }
 
 /* Element i by the inserted point t. */
@@ -228,21 +142,57 @@ static bool replaceable(worker *w, int i, int c, int slot, unsigned wilds)
     return true;
 }
 
+/*
+ * Whether E, all of its new points used, can be completed: elements from i on by C's points from
+ * c on, of which i - c are still to be removed.
+ */
+static bool completes(worker *w, int i, int c, int needed)
+{
+    const struct slip_canonical_problem *q = w->problem;
+    if (i == (int)q->n)
+        return true;
+    if (i == c)
+        return needed < i;
+    const struct wild *last = &w->wild[1];
+    if ((int)last->serves != i - 1 || replaceable(w, i - 1, c, (int)last->slot, 2))
+        if (completes(w, i, c + 1, needed))
+            return true;
+    int key = 2 * q->value[c] + 1;
+    if (!in_bounds(w, i, c) || !within_reach(w, i, key, &needed) || !go_on(w, 1))
+        return false;
+    w->keys[i + 1] = (int16_t)key;
+    bool complete = completes(w, i + 1, c + 1, needed);
+    w->keys[i + 1] = (int16_t)(2 * q->value[i] + 1);
+    return complete;
+}
+
+/* Element i by the last wildcard in this slot of p; the rest by C's points. */
+static void use_last_wild(worker *w, int i, int c, int slot, int needed)
+{
+    if (c > i + 1 || (c == i + 1 && needed > i && c < (int)w->problem->n))
+        return; /* short of a point, or of one for those that are needed */
+    w->keys[i + 1] = (int16_t)(2 * slot);
+    if (completes(w, i + 1, c, needed))
+        report(w);
+    w->keys[i + 1] = (int16_t)(2 * w->problem->value[i] + 1);
+}
+
 /* Element i by the next wildcard in this slot of p. */
-static bool use_wild_in(worker *w, int i, int c, unsigned t, unsigned wilds, int slot, int needed)
+static void use_wild_in(worker *w, int i, int c, unsigned t, unsigned wilds, int slot, int needed)
 {
     if (!within_reach(w, i, 2 * slot, &needed))
-        return false;
+        return;
     int shared = w->shared, until = w->until;
-    bool found = false, open = true;
+    bool open = true;
     w->wild[wilds] = (struct wild){(unsigned)c, (unsigned)slot, (unsigned)i};
     for (int removed = w->reached; removed < c && open; removed++)
         open = replaceable(w, i, removed, slot, wilds + 1);
-    if (open)
-        found = served_by_new(w, i, c, t, wilds + 1, 2 * slot, needed);
+    if (open && wilds == 1)
+        use_last_wild(w, i, c, slot, needed);
+    else if (open)
+        served_by_new(w, i, c, t, wilds + 1, 2 * slot, needed);
     w->shared = shared;
     w->until = until;
-    return found;
 }
 
 /* Element i by the next wildcard, in every slot of p that may do. */
@@ -259,20 +209,19 @@ static void use_wild(worker *w, int i, int c, unsigned t, unsigned wilds, int ne
     }
     if (from > to || hushed(w, i, c))
         return;
+    if (!w->slots_found)
+        find_slots(w);
     for (int slot = from; slot <= to; slot++)
-        if (allowed_between(w->at, (unsigned)c, (unsigned)slot))
+        if (allowed_between(w, (unsigned)c, (unsigned)slot))
             use_wild_in(w, i, c, t, wilds, slot, needed);
 }
 
 /* Element i by C's next point. */
-static bool use_element(worker *w, int i, int c, unsigned t, unsigned wilds, int needed)
+static void use_element(worker *w, int i, int c, unsigned t, unsigned wilds, int needed)
 {
-    if (!in_bounds(w, i, c))
-        return false;
     int key = 2 * w->problem->value[c] + 1;
-    if (c != i && !within_reach(w, i, key, &needed))
-        return false;
-    return served(w, i, c + 1, t, wilds, key, needed);
+    if (in_bounds(w, i, c) && (c == i || within_reach(w, i, key, &needed)))
+        served(w, i, c + 1, t, wilds, key, needed);
 }
 
 /*
@@ -300,57 +249,48 @@ static void hush(worker *w, int i, int c)
 }
 
 /* Passes over C's next point. */
-static bool remove_element(worker *w, int i, int c, unsigned t, unsigned wilds, int needed)
+static void remove_element(worker *w, int i, int c, unsigned t, unsigned wilds, int needed)
 {
-    int left = (int)(w->at->count - t) + 2 - (int)wilds; /* new points that may follow */
-    if (c + 1 - i > left)
-        return false;
     int hush_from = w->hush_from, hush_to = w->hush_to, shared = w->shared, until = w->until;
-    bool found = false, open = true;
-    if (wilds && (int)w->wild[wilds - 1].serves == i - 1 && (wilds == 2 || w->at->count))
-        open = replaceable(w, i - 1, c, (int)w->wild[wilds - 1].slot, wilds);
-    if (open && wilds < 2 && c >= i && in_bounds(w, i, c))
+    if (wilds && (int)w->wild[0].serves == i - 1 && w->at->count)
+        replaceable(w, i - 1, c, (int)w->wild[0].slot, wilds);
+    if (c >= i && in_bounds(w, i, c))
         hush(w, i, c);
-    if (open)
-        found = scan(w, i, c + 1, t, wilds, needed);
+    scan(w, i, c + 1, t, wilds, needed);
     w->hush_from = hush_from;
     w->hush_to = hush_to;
     w->shared = shared;
     w->until = until;
-    return found;
 }
 
-static bool scan(worker *w, int i, int c, unsigned t, unsigned wilds, int needed)
+static void scan(worker *w, int i, int c, unsigned t, unsigned wilds, int needed)
 {
+    const struct slip_canonical_problem *q = w->problem;
     const struct node *node = w->at;
-    int n = (int)w->problem->n;
-    bool level = i == c;
-    if (i == n || (level && needed < i)) {
-        if (wilds == 2)
-            report(w);
-        return wilds == 2;
-    }
-    if (!go_on(w, 1))
-        return false;
-    if (wilds == 2) /* one way to end is enough; none at level, with some still needed */
-        return !level && c < n &&
-               (remove_element(w, i, c, t, wilds, needed) ||
-                use_element(w, i, c, t, wilds, needed));
-    if (i > w->until || (w->hush_to == n - 1 && i > w->hush_from))
-        return false; /* no place for the new points that are still to come */
+    int n = (int)q->n;
+    if (i == n || (i == c && needed < i))
+        return;                                         /* complete without all that it must use */
+    int left = (int)(node->count - t) + 2 - (int)wilds; /* new points that may follow */
+    if (c - i > left)
+        return; /* more was removed than they can make good */
+    if (i > w->until || (w->hush_to == n - 1 && i > w->hush_from) || !go_on(w, 1))
+        return; /* no place for the new points that are still to come */
     if (t < node->count && node->points[t].gap == c) {
         use_point(w, i, c, t, needed);
         if (t + 1 < node->count) /* the last one must be used */
             scan(w, i, c, t + 1, 0, needed);
-        return false;
+        return;
     }
-    if (t == node->count)
+    /* With one wildcard left and all else in its place, that one's chain must go on from i to the
+     * needed elements. */
+    bool stay = wilds == 1 && i == c && i < needed && q->leap[i] > w->reach + 1;
+    if (t == node->count && !stay)
         use_wild(w, i, c, t, wilds, needed);
     if (c < n) {
         use_element(w, i, c, t, wilds, needed);
-        remove_element(w, i, c, t, wilds, needed);
+        if (!stay && c - i < left)
+            remove_element(w, i, c, t, wilds, needed);
     }
-    return false;
 }
 
 /* Fills fresh with the pairs at this node that need its last point. */
@@ -359,6 +299,7 @@ static void search(worker *w, const struct node *node)
     const struct slip_canonical_problem *q = w->problem;
     w->at = node;
     w->fresh.count = 0;
+    w->slots_found = false;
     w->hush_to = w->shared = -1;
     w->until = (int)q->n;
     if (node->count == 0) {

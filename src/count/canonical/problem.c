@@ -1,5 +1,7 @@
 #include "count/canonical/canonical.h"
 
+#include <stdlib.h>
+
 void slip_canonical_problem_set(struct slip_canonical_problem *problem, const struct slip_perm *p,
                                 uint32_t r)
 {
@@ -22,6 +24,9 @@ void slip_canonical_problem_set(struct slip_canonical_problem *problem, const st
     }
     for (uint32_t i = p->n; i-- > 0;) {
         problem->run[i] = (uint8_t)i;
+        problem->leap[i] = UINT8_MAX;
+        if (i + 1 < p->n)
+            problem->leap[i] = (uint8_t)abs((int)p->at[i + 1] - (int)p->at[i]);
         for (int step = -1; step <= 1; step += 2) {
             uint32_t e = i;
             while (e + 1 < p->n && (int)p->at[e + 1] - (int)p->at[e] == step)
