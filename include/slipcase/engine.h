@@ -29,6 +29,7 @@ struct slip_engine {
     const char *status;  /* how far its figures are established: "proved" */
     const char *summary; /* one line for --help */
     uint32_t longest;    /* the largest n + r it takes; 0: no such limit */
+    uint32_t most;       /* the largest r it takes; 0: no such limit */
 
     /* Whether the engine takes this job: SLIP_OK, or SLIP_LIMIT with what is too large (size, or
      * memory by an estimate made before the work). */
@@ -50,6 +51,8 @@ static inline const char *slip_engine_status(const struct slip_engine *engine, u
 {
     return engine->status_for ? engine->status_for(r) : engine->status;
 }
+
+SLIP_API bool slip_engine_proved(const struct slip_engine *engine, uint32_t r);
 
 /* The engine of this name, or NULL. */
 SLIP_API const struct slip_engine *slip_engine_find(const char *name);

@@ -85,6 +85,14 @@ static slip_status engine(struct slip_text *cell, const struct slip_row *row, co
     return slip_text_ok(cell, err);
 }
 
+static slip_status standing(struct slip_text *cell, const struct slip_row *row, const char *name,
+                            struct slip_error *err)
+{
+    (void)name;
+    slip_text_string(cell, slip_engine_status(row->engine, row->r));
+    return slip_text_ok(cell, err);
+}
+
 /* Permutations of length n + r that avoid it: (n+r)! - distinct. */
 static slip_status avoiders(struct slip_text *cell, const struct slip_row *row, const char *name,
                             struct slip_error *err)
@@ -117,10 +125,11 @@ static const struct count_column all[] = {
     {"sequences", SLIP_CELL_BIG, sequences},
     {"orbit", SLIP_CELL_NUMBER, orbit},
     {"engine", SLIP_CELL_TEXT, engine},
+    {"status", SLIP_CELL_TEXT, standing},
     {"name", SLIP_CELL_TEXT, name_of},
     {"avoiders", SLIP_CELL_BIG, avoiders},
 };
-enum { ALL = sizeof all / sizeof *all, USUAL = 8, NAME = 8, MOST = 1000 };
+enum { ALL = sizeof all / sizeof *all, USUAL = 9, NAME = 9, MOST = 1000 };
 
 /* A new column, empty; NULL without memory. */
 static struct column *add(struct columns *columns)

@@ -27,6 +27,10 @@ static const struct option options[] = {
      "of placements, and small rows against trying all permutations"},
     {"--cross-check", NULL, false,
      "count every row with every engine that takes it; a difference is exit 5"},
+    {"--proved-only", NULL, false, "refuse rows whose count would not be proved (exit 3)"},
+    {"--no-jumps", NULL, false,
+     "the formula for r = 3 takes every step: a slow check of what it passes\n"
+     "over in permutations that go on evenly for long"},
 };
 static const struct option_group own = {"What is shown", options, sizeof options / sizeof *options};
 static const struct option_group *const groups[] = {&sources_options, &counting_options, &own,
@@ -40,7 +44,8 @@ struct counting {
     struct range r;
     struct columns columns;
     struct slip_summary summary;
-    bool check, cross_check, summarise;
+    bool check, cross_check, summarise, proved_only;
+    bool told; /* that a row rests on what is not proved */
     struct slip_item items[CHUNK];
     size_t held;
     const struct slip_item *showing; /* the item of the row that is being shown */
@@ -76,6 +81,19 @@ static slip_status summarise(struct counting *counting, const struct slip_item *
     return status;
 }
 
+/* Says once what rows rest on that nobody asked for by the engine's name. */
+static void tell_standing(struct counting *counting, const struct slip_row *row)
+{
+    if (counting->engine || counting->told || slip_engine_proved(row->engine, row->r))
+        return;
+    counting->told = true;
+    work_hide(&counting->batch->work);
+    remark(counting->batch->call,
+           "rows too large to go through their results are counted by the engine %s, which for "
+           "r = %u is not proved (%s)",
+           row->engine->name, row->r, slip_engine_status(row->engine, row->r));
+}
+
 /* A counted row, in order. */
 static slip_status row_done(void *context, struct slip_row *row, struct slip_error *err)
 {
@@ -85,6 +103,7 @@ static slip_status row_done(void *context, struct slip_row *row, struct slip_err
         item++;
     counting->showing = item;
     slip_status status = SLIP_OK;
+    tell_standing(counting, row);
     if (counting->check)
         status =
             slip_check_row(row->distinct, row->perm, row->r, &counting->batch->work.hooks, err);
@@ -122,9 +141,11 @@ static slip_status count_held(struct counting *counting, struct slip_error *err)
     struct slip_row *rows = malloc(count * sizeof *rows);
     if (!rows)
         return slip_fail_memory(err, count * sizeof *rows);
-    for (size_t i = 0; i < count; i++)
+    for (size_t i = 0; i < count; i++) {
         slip_row_init(&rows[i], &counting->items[i / each].perm,
                       counting->r.from + (uint32_t)(i % each));
+        rows[i].proved = counting->proved_only;
+    }
     counting->showing = counting->items;
     counting->end = rows + count;
     work_label(&counting->batch->work, rows[0].perm, rows[0].r);
@@ -205,7 +226,8 @@ static int begin(struct counting *counting, const struct call *call)
     if (!code)
         code = batch_begin(counting->batch, call, 0, names);
     if (!code)
-        code = counting_fits(call, counting->engine, counting->batch->source, counting->r.to);
+        code =
+            counting_fits(call, counting->engine, counting->batch->source, counting->r.to, false);
     if (!code)
         code = columns_complete(&counting->columns, call, counting->batch->names,
                                 counting->batch->source);
@@ -222,10 +244,12 @@ static int run(struct call *call)
     counting->check = call_flag(call, "--check");
     counting->cross_check = call_flag(call, "--cross-check");
     counting->summarise = call_flag(call, "--summary");
+    counting->proved_only = call_flag(call, "--proved-only");
     slip_summary_init(&counting->summary);
     int code = begin(counting, call);
     bool began = code == 0;
     batch.work.total *= (double)counting->r.to - counting->r.from + 1;
+    batch.work.hooks.no_jumps = call_flag(call, "--no-jumps");
     if (began)
         code = batch_run(&batch, hold, counting);
     if (began && counting->summarise &&
@@ -256,7 +280,8 @@ const struct command command_count = {
     .details = "Columns: permutation, n (its length), r, distinct (different results),\n"
                "placements (results with the inserted points marked), sequences (insertion\n"
                "sequences), orbit (size of its class under the eight symmetries of the square),\n"
-               "engine (what counted), name (when the input has any), param(K) for each\n"
+               "engine (what counted), status (how far its figures are established: proved, or\n"
+               "what they rest on), name (when the input has any), param(K) for each\n"
                "parameter K of a --family; and on request avoiders (permutations of length\n"
                "n + r that do not contain it) and statistics ('slipcase statistics' lists them).\n"
                "In JSON distinct, placements, sequences, avoiders and occ(P) are strings.\n",

@@ -8,6 +8,8 @@ static const struct option options[] = {
     {"-r", "R|A..B", false, "how many elements are inserted (default: 1)"},
     {"--engine", "NAME", false,
      "auto (default: the fastest one whose result is proved) or the name of one:\n"
+     "formula, ceiling minus defect, r up to 3, any length, counts only;\n"
+     "canonical, every result once through its first embedding;\n"
      "store, level by level through the hashed permutation store"},
 };
 
@@ -51,14 +53,19 @@ int counting_engine(const struct call *call, const struct slip_engine **engine)
 }
 
 int counting_fits(const struct call *call, const struct slip_engine *engine,
-                  const struct slip_source *source, uint32_t r)
+                  const struct slip_source *source, uint32_t r, bool lists)
 {
+    if (engine && engine->most && r > engine->most)
+        return misuse_missing(call, "the engine %s takes r up to %u; canonical and store take more",
+                              engine->name, engine->most);
     uint64_t length = (uint64_t)slip_source_longest(source) + r;
     uint32_t most = engine ? engine->longest : 0;
     size_t count;
     const struct slip_engine *const *list = slip_engine_list(&count);
     bool unlimited = engine && !engine->longest;
     for (size_t i = 0; !engine && i < count; i++) {
+        if ((list[i]->most && r > list[i]->most) || (lists && !list[i]->visit))
+            continue;
         unlimited = unlimited || !list[i]->longest;
         most = list[i]->longest > most ? list[i]->longest : most;
     }

@@ -18,10 +18,10 @@ int counting_single(const struct call *call, uint32_t *r);
 /* The engine named, or NULL for the choice by row; 0 or 2. */
 int counting_engine(const struct call *call, const struct slip_engine **engine);
 
-/* Whether some engine that may be used takes r more elements than the longest permutation that is
- * known beforehand: 0, or 3 after a message. */
+/* Whether some engine that may be used (and, if `lists`, can list results) takes r more elements
+ * than the longest permutation that is known beforehand: 0, or 2 or 3 after a message. */
 int counting_fits(const struct call *call, const struct slip_engine *engine,
-                  const struct slip_source *source, uint32_t r);
+                  const struct slip_source *source, uint32_t r, bool lists);
 
 /* Puts the permutation and r of a row that failed before the message; returns the status. */
 slip_status counting_name_row(slip_status status, const struct slip_row *row,

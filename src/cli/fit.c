@@ -28,7 +28,8 @@ static int begin_count(struct fitting *fitting)
 {
     int code = batch_begin(&fitting->batch, fitting->call, 0, false);
     if (!code)
-        code = counting_fits(fitting->call, fitting->engine, fitting->batch.source, fitting->r.to);
+        code = counting_fits(fitting->call, fitting->engine, fitting->batch.source, fitting->r.to,
+                             true);
     fitting->batch.work.total *= (double)fitting->r.to - fitting->r.from + 1;
     return code;
 }

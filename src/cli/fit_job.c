@@ -76,6 +76,7 @@ slip_status fit_job(struct fitting *fitting, uint32_t r, struct fit_job **job,
     slip_terms_init(&(*job)->terms);
     slip_terms_init(&(*job)->choices);
     slip_text_init(&(*job)->engines);
+    (*job)->engine = fitting->engine;
     slip_status status = make_terms(fitting, *job, err);
     if (status == SLIP_OK && fitting->orbit)
         status = slip_class_set_new(&(*job)->classes, &fitting->batch.work.hooks, err);

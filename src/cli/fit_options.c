@@ -194,19 +194,6 @@ static int read_show(struct fitting *fitting)
     return 0;
 }
 
-/* Only counts that come from going through the results may test a formula for their number. */
-static int read_engine(struct fitting *fitting)
-{
-    int code = counting_engine(fitting->call, &fitting->engine);
-    const struct slip_engine *engine = fitting->engine;
-    if (!code && engine && (strcmp(engine->status, "proved") || !engine->visit))
-        return misuse_missing(fitting->call,
-                              "a fit is tested on results that were gone through one by one, and "
-                              "the engine %s computes their number",
-                              engine->name);
-    return code;
-}
-
 int fit_read_options(struct fitting *fitting)
 {
     static const char *const weights[] = {"orbit"};
@@ -216,7 +203,7 @@ int fit_read_options(struct fitting *fitting)
     if (!code && fitting->r.to - fitting->r.from > 99)
         code = wrong(fitting->call, call_option(fitting->call, "-r"), "at most 100 numbers");
     if (!code)
-        code = read_engine(fitting);
+        code = counting_engine(fitting->call, &fitting->engine);
     if (!code)
         code = read_formula(fitting);
     if (!code && fitting->powers && fitting->default_degree && fitting->r.to > SLIP_POWER_MOST / 2)

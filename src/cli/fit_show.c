@@ -19,7 +19,9 @@ static struct slip_fit_plan plan_of(const struct fitting *fitting, const struct 
 void fit_data_status(struct slip_text *text, const struct fit_job *job)
 {
     uint64_t rows = slip_samples_count(job->samples);
-    if (job->trusted == 0)
+    if (job->trusted == 0 && job->engine && !job->engine->visit)
+        slip_text_format(text, "computed, %s", slip_engine_status(job->engine, job->r));
+    else if (job->trusted == 0)
         slip_text_string(text, "proved");
     else if (job->trusted == rows)
         slip_text_string(text, "taken on trust");

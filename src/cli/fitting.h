@@ -12,13 +12,14 @@
 /* The fit for one r. */
 struct fit_job {
     uint32_t r;
-    struct slip_terms terms;        /* in every formula */
-    struct slip_terms choices;      /* of --search */
-    struct slip_samples *samples;   /* the rows */
-    struct slip_class_set *classes; /* met so far, with --weights orbit */
-    bool doubled;                   /* some class was met twice */
-    struct slip_text engines;       /* what counted, names separated by commas */
-    uint64_t trusted;               /* rows whose figures were not counted here */
+    struct slip_terms terms;          /* in every formula */
+    struct slip_terms choices;        /* of --search */
+    struct slip_samples *samples;     /* the rows */
+    struct slip_class_set *classes;   /* met so far, with --weights orbit */
+    bool doubled;                     /* some class was met twice */
+    struct slip_text engines;         /* what counted, names separated by commas */
+    const struct slip_engine *engine; /* that was asked for, or NULL */
+    uint64_t trusted;                 /* rows whose figures were not counted here */
 };
 
 enum fit_show { FIT_SHOW_FITS, FIT_SHOW_SEARCH, FIT_SHOW_RESIDUALS, FIT_SHOW_PLOT };

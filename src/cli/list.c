@@ -322,7 +322,7 @@ static int begin(struct listing *listing, const struct call *call)
     if (!code)
         code = batch_begin(listing->batch, call, 0, listing->count == 0);
     if (!code)
-        code = counting_fits(call, listing->engine, listing->batch->source, listing->r);
+        code = counting_fits(call, listing->engine, listing->batch->source, listing->r, true);
     listing->batch->work.total = 0; /* rows are results here, and their number is not known */
     slip_text_number(&listing->number, listing->r);
     return code ? code : set_columns(listing);

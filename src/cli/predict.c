@@ -227,6 +227,11 @@ static int begin(struct predicting *predicting, const struct call *call)
     predicting->against = against != NULL;
     if (!code)
         code = counting_engine(call, &predicting->engine);
+    if (!code && predicting->engine && !predicting->engine->visit)
+        code = misuse_missing(call,
+                              "predictions are held against results that were gone through one by "
+                              "one, and the engine %s computes their number",
+                              predicting->engine->name);
     if (!code && load(predicting, file->value, &err) != SLIP_OK)
         code = complain_error(call, &err);
     if (!code)

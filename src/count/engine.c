@@ -4,6 +4,7 @@
 
 /* The fastest first. */
 static const struct slip_engine *const engines[] = {
+    &slip_engine_formula,
     &slip_engine_canonical,
     &slip_engine_store,
 };
@@ -12,6 +13,11 @@ const struct slip_engine *const *slip_engine_list(size_t *count)
 {
     *count = sizeof engines / sizeof *engines;
     return engines;
+}
+
+bool slip_engine_proved(const struct slip_engine *engine, uint32_t r)
+{
+    return strcmp(slip_engine_status(engine, r), "proved") == 0;
 }
 
 const struct slip_engine *slip_engine_find(const char *name)

@@ -4,29 +4,51 @@
 #include <omp.h>
 #endif
 
+static slip_status not_proved(const struct slip_engine *engine, const struct slip_perm *p,
+                              uint32_t r, struct slip_error *err)
+{
+    return slip_fail(err, SLIP_LIMIT,
+                     "only the engine %s, not proved for r = %u (%s), counts about %.2g results in "
+                     "good time",
+                     engine->name, r, slip_engine_status(engine, r), slip_count_estimate(p->n, r));
+}
+
 slip_status slip_engine_choose(const struct slip_engine **engine, const struct slip_perm *p,
-                               uint32_t r, bool lists, const struct slip_hooks *hooks,
+                               uint32_t r, enum slip_engine_use use, const struct slip_hooks *hooks,
                                struct slip_error *err)
 {
     size_t count;
     const struct slip_engine *const *list = slip_engine_list(&count); /* the fastest first */
+    const struct slip_engine *faster = NULL;                          /* not proved */
     slip_status status = SLIP_LIMIT;
     for (size_t i = 0; i < count; i++) {
-        if (lists && !list[i]->visit)
+        if (use == SLIP_ENGINE_LIST && !list[i]->visit)
             continue;
+        if (faster && slip_count_estimate(p->n, r) > SLIP_ENGINE_ENDURED)
+            break;
         status = list[i]->accepts(p, r, hooks, err);
-        if (status == SLIP_OK) {
+        if (status != SLIP_OK)
+            continue;
+        if (slip_engine_proved(list[i], r)) {
             *engine = list[i];
             return SLIP_OK;
         }
+        if (!faster)
+            faster = list[i];
     }
-    return status;
+    if (!faster)
+        return status;
+    if (use == SLIP_ENGINE_PROVED)
+        return not_proved(faster, p, r, err);
+    *engine = faster;
+    return SLIP_OK;
 }
 
 void slip_row_init(struct slip_row *row, const struct slip_perm *perm, uint32_t r)
 {
     row->perm = perm;
     row->r = r;
+    row->proved = false;
     row->engine = NULL;
     mpz_init(row->distinct);
 }
@@ -42,9 +64,14 @@ static slip_status count_row(struct slip_row *row, const struct slip_engine *eng
     slip_status status = slip_hooks_poll(hooks, err);
     row->engine = engine;
     if (status == SLIP_OK && !engine)
-        status = slip_engine_choose(&row->engine, row->perm, row->r, false, hooks, err);
+        status =
+            slip_engine_choose(&row->engine, row->perm, row->r,
+                               row->proved ? SLIP_ENGINE_PROVED : SLIP_ENGINE_COUNT, hooks, err);
     else if (status == SLIP_OK)
         status = engine->accepts(row->perm, row->r, hooks, err);
+    if (status == SLIP_OK && row->proved && !slip_engine_proved(row->engine, row->r))
+        status = slip_fail(err, SLIP_LIMIT, "the engine %s is not proved for r = %u (%s)",
+                           row->engine->name, row->r, slip_engine_status(row->engine, row->r));
     if (status == SLIP_OK)
         status = row->engine->count(row->distinct, row->perm, row->r, hooks, err);
     return status;

@@ -16,8 +16,8 @@ static slip_status accepts(const struct slip_perm *p, uint32_t r, const struct s
 {
     if (r > MOST)
         return slip_fail(err, SLIP_USAGE,
-                         "the formula counts at most %d insertions, not %u; other engines count "
-                         "more",
+                         "the engine formula counts up to %d insertions, not %u; canonical and store "
+                         "count more",
                          MOST, r);
     if (r == MOST && p->n > SLIP_TRIPLE_LONGEST)
         return slip_fail(err, SLIP_LIMIT, "length %u; the formula takes lengths up to %d", p->n,
@@ -88,6 +88,7 @@ const struct slip_engine slip_engine_formula = {
     .name = "formula",
     .status = "proved for r <= 2, verified n<=9 for r = 3",
     .summary = "ceiling minus defect, without results; r <= 3, any length",
+    .most = MOST,
     .accepts = accepts,
     .count = count,
     .status_for = status_for,

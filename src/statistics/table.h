@@ -63,8 +63,16 @@ STATISTIC(proper_intervals, PLAIN, ALL, "proper_intervals",
 STATISTIC(intervals, SIZE, ALL, "intervals", "intervals of K elements", "O(n)",
           "definition; extremes of a sliding window")
 STATISTIC(staircases, PLAIN, ALL, "staircases",
-          "intervals whose pattern is a staircase, rising ones and falling ones added up", "O(n^2)",
-          "definition")
+          "intervals whose pattern is a staircase, rising ones and falling ones added up", "O(n)",
+          "docs/two-insertions.md; what two insertions give less than the ceiling")
+STATISTIC(staircase_weight, PLAIN, ALL, "staircase_weight",
+          "the weights e + h of the staircases added up", "O(n)", "docs/three-insertions.md")
+STATISTIC(knights, PLAIN, ALL, "knights",
+          "neighbouring values two positions apart, and neighbouring positions two values apart",
+          "O(n)", "definition")
+STATISTIC(triple_couplings, PLAIN, ALL, "triple_couplings",
+          "canonical triple couplings, where three insertions meet and no two of them",
+          "nearly O(n) on the families tried", "docs/three-insertions.md")
 STATISTIC(occ, PATTERN, ONE, "occ", "occurrences of P: subsequences in the same relative order",
           "O(n log n) up to length 2, else a search of up to n^k steps, k the length of P",
           "definition")
