@@ -34,22 +34,37 @@ static void write_words(uint64_t *out, uint64_t bumped, uint64_t nibble, uint32_
     }
 }
 
+/* The bytes of a word that stand in memory before the place, all of them ones. */
+static inline uint64_t bytes_before(uint32_t place)
+{
+#if __BYTE_ORDER__ == __ORDER_BIG_ENDIAN__
+    return ~(UINT64_MAX >> 8 * place);
+#else
+    return ((uint64_t)1 << 8 * place) - 1;
+#endif
+}
+
+/*
+ * A result with the new element at place i has the elements where they stand before i, and one
+ * place to the right after it: whole words of the two rows, but for the one word that holds i.
+ * (Exchanging neighbours byte by byte is slower: words are then read just after a part of them was
+ * written, for which the processor waits.)
+ */
 static inline void write_bytes(uint64_t *out, const unsigned char *elements, unsigned char value,
                                uint32_t length, uint32_t words)
 {
-    uint64_t row[(SLIP_PACKED_LONGEST + 7) / 8];
-    unsigned char *bytes = (unsigned char *)row;
-    row[words - 1] = 0; /* the padding */
-    memcpy(bytes, elements, length - 1);
-    bytes[length - 1] = value;
-    for (uint32_t i = length - 1;; i--) {
+    uint64_t stay[(SLIP_PACKED_LONGEST + 7) / 8], move[(SLIP_PACKED_LONGEST + 7) / 8];
+    move[0] = stay[words - 1] = move[words - 1] = 0; /* before the first, and the padding */
+    const uint64_t everywhere = value * (UINT64_MAX / 255);
+    memcpy(stay, elements, length - 1);
+    memcpy((unsigned char *)move + 1, elements, length - 1);
+    for (uint32_t i = length; i-- > 0; out += words) {
+        const uint32_t at = i / 8;
+        const uint64_t before = bytes_before(i % 8);
+        const uint64_t here = i % 8 == 7 ? ~before : bytes_before(i % 8 + 1) & ~before;
         for (uint32_t w = 0; w < words; w++)
-            out[w] = row[w];
-        out += words;
-        if (i == 0)
-            return;
-        bytes[i] = bytes[i - 1];
-        bytes[i - 1] = value;
+            out[w] = w < at ? stay[w] : move[w];
+        out[at] = (stay[at] & before) | (everywhere & here) | (move[at] & ~before & ~here);
     }
 }
 

@@ -192,12 +192,11 @@ static inline slip_status add_one(struct slip_store *store, const uint64_t *key,
 }
 
 /*
- * Keys are looked up in runs, so that memory works on all of a run at once: first their buckets
- * are asked for, then the first entry of each bucket, then the second one where the first is
- * another permutation, and only then are the keys looked up. A run is long enough to keep memory
- * busy and short enough for all of it to stay in the first-level cache.
+ * Keys go through four steps, each LAG keys behind the one before, so that memory always works on
+ * many of them at once: their bucket is asked for, then the first entry in the bucket, then the
+ * second one if the first is another permutation, and only then the key is looked up.
  */
-enum { RUN = 32 };
+enum { LAG = 16, HASHES = 4 * LAG }; /* powers of two */
 
 /* Asks for what a look-up reads and writes: the handle from hh_prev on, the weight and the key. Up
  * to three words a key that is 64 bytes at most, so its two ends cover all lines it touches. */
@@ -207,60 +206,62 @@ static inline void ask_for(const UT_hash_handle *handle, uint32_t words)
     __builtin_prefetch((const char *)handle + sizeof(struct slip_entry) + 8 * words - 1);
 }
 
-static inline slip_status add_run(struct slip_store *store, const uint64_t *keys, size_t count,
+static inline const UT_hash_bucket *bucket_of(const struct slip_store *store, unsigned hash)
+{
+    const UT_hash_table *table = store->head->hh.tbl;
+    return &table->buckets[hash & (table->num_buckets - 1)];
+}
+
+static inline void ask_for_first(const struct slip_store *store, unsigned hash, uint32_t words)
+{
+    const UT_hash_handle *first = bucket_of(store, hash)->hh_head;
+    if (first)
+        ask_for(first, words);
+}
+
+static inline void ask_for_second(const struct slip_store *store, unsigned hash, uint32_t words)
+{
+    const UT_hash_handle *first = bucket_of(store, hash)->hh_head;
+    if (first && first->hashv != hash && first->hh_next)
+        ask_for(first->hh_next, words);
+}
+
+static inline slip_status add_all(struct slip_store *store, const uint64_t *keys, size_t count,
                                   uint32_t words, const uint64_t *weights, struct slip_error *err)
 {
-    unsigned hashes[RUN];
-    const UT_hash_table *table = store->head->hh.tbl;
-    const unsigned mask = table->num_buckets - 1;
-    for (size_t i = 0; i < count; i++) {
-        hashes[i] = slip_hash_words(keys + i * words, words);
-        __builtin_prefetch(&table->buckets[hashes[i] & mask]);
-    }
-    for (size_t i = 0; i < count; i++) {
-        const UT_hash_handle *first = table->buckets[hashes[i] & mask].hh_head;
-        if (first)
-            ask_for(first, words);
-    }
-    for (size_t i = 0; i < count; i++) {
-        const UT_hash_handle *first = table->buckets[hashes[i] & mask].hh_head;
-        if (first && first->hashv != hashes[i] && first->hh_next)
-            ask_for(first->hh_next, words);
-    }
+    unsigned hashes[HASHES]; /* of the keys under way, key i in i % HASHES */
     slip_status status = SLIP_OK;
-    for (size_t i = 0; i < count && status == SLIP_OK; i++)
-        status = add_one(store, keys + i * words, words, hashes[i], weights ? weights[i] : 1, err);
+    for (size_t i = 0; i < count + 3 * LAG && status == SLIP_OK; i++) {
+        if (i < count) {
+            hashes[i % HASHES] = slip_hash_words(keys + i * words, words);
+            __builtin_prefetch(bucket_of(store, hashes[i % HASHES]));
+        }
+        if (i - LAG < count)
+            ask_for_first(store, hashes[(i - LAG) % HASHES], words);
+        if (i - 2 * LAG < count)
+            ask_for_second(store, hashes[(i - 2 * LAG) % HASHES], words);
+        size_t k = i - 3 * LAG; /* wraps around, beyond count, before the first */
+        if (k < count)
+            status = add_one(store, keys + k * words, words, hashes[k % HASHES],
+                             weights ? weights[k] : 1, err);
+    }
     return status;
 }
 
 /* The sizes in common use (lengths up to 16, 24, 32) are compiled apart, as straight-line code. */
-static slip_status add_sized(struct slip_store *store, const uint64_t *keys, size_t count,
-                             const uint64_t *weights, struct slip_error *err)
-{
-    switch (store->words) {
-    case 1:
-        return add_run(store, keys, count, 1, weights, err);
-    case 3:
-        return add_run(store, keys, count, 3, weights, err);
-    case 4:
-        return add_run(store, keys, count, 4, weights, err);
-    default:
-        return add_run(store, keys, count, store->words, weights, err);
-    }
-}
-
 slip_status slip_store_add(struct slip_store *store, const uint64_t *keys, size_t count,
                            const uint64_t *weights, struct slip_error *err)
 {
-    slip_status status = SLIP_OK;
-    while (count && status == SLIP_OK) {
-        size_t run = count < RUN ? count : RUN;
-        status = add_sized(store, keys, run, weights, err);
-        keys += run * store->words;
-        weights = weights ? weights + run : NULL;
-        count -= run;
+    switch (store->words) {
+    case 1:
+        return add_all(store, keys, count, 1, weights, err);
+    case 3:
+        return add_all(store, keys, count, 3, weights, err);
+    case 4:
+        return add_all(store, keys, count, 4, weights, err);
+    default:
+        return add_all(store, keys, count, store->words, weights, err);
     }
-    return status;
 }
 
 bool slip_store_find(const struct slip_store *store, const uint64_t *key, uint64_t *weight)
