@@ -6,6 +6,7 @@
 #include "slipcase/case_table.h"
 #include "slipcase/figure.h"
 #include "slipcase/pair.h"
+#include "slipcase/report.h"
 #include "slipcase/table.h"
 
 /* "w2 even, h2 odd"; "w3 = 1 mod 3" for larger steps; nothing where no residue matters. */
@@ -48,7 +49,8 @@ SLIP_API void slip_pair_sentence(struct slip_text *text, const struct slip_pair 
 /* A word for the condition: "none", "empty", "pairing", "equation", "contents". */
 SLIP_API const char *slip_pair_condition_word(enum slip_condition condition);
 
-/* The chain from B's point k+1: "B1: column 3 row 1, column 2 row 2, A1". */
+/* The chain from B's point k+1: "B1 -> A2: elements 3, 1", or, when it does not close,
+ * its positions and values. */
 SLIP_API void slip_pair_chain_text(struct slip_text *text, const struct slip_pair *pair,
                                    uint32_t k);
 
