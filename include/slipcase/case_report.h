@@ -54,4 +54,8 @@ SLIP_API const char *slip_pair_condition_word(enum slip_condition condition);
 SLIP_API void slip_pair_chain_text(struct slip_text *text, const struct slip_pair *pair,
                                    uint32_t k);
 
+/* The chains as a JSON array of objects: b (B's point), b_row, a_column, a_row (the lines of A
+ * where it ends), positions and values (those it visits). */
+SLIP_API void slip_pair_chains_json(struct slip_text *text, const struct slip_pair *pair);
+
 #endif

@@ -11,5 +11,7 @@ extern const struct command command_contains;
 extern const struct command command_statistics;
 extern const struct command command_fit;
 extern const struct command command_predict;
+extern const struct command command_cases;
+extern const struct command command_explain;
 
 #endif

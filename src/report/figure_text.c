@@ -213,15 +213,6 @@ void slip_figure_text(struct slip_text *text, const struct slip_figure *figure)
 
 /* ---- legends ---- */
 
-static bool occurs(const struct slip_figure *figure, enum slip_region status)
-{
-    for (uint32_t i = 0; i < figure->columns.strips; i++)
-        for (uint32_t j = 0; j < figure->rows.strips; j++)
-            if (figure->region[i][j] == status)
-                return true;
-    return false;
-}
-
 void slip_figure_legend(struct slip_text *text, const struct slip_figure *figure)
 {
     slip_text_string(text, "| and - are lines of A, : and = lines of B; A and B mark the inserted "
@@ -231,16 +222,10 @@ void slip_figure_legend(struct slip_text *text, const struct slip_figure *figure
                                "on no chain; X: breaks a condition.\n");
         return;
     }
-    slip_text_string(text, "w0, w1, ... are the numbers of columns in the strips, h0, h1, ... "
-                           "those of rows.\n");
-    if (occurs(figure, SLIP_REGION_FREE))
-        slip_text_string(text, "free: any elements. ");
-    if (occurs(figure, SLIP_REGION_EMPTY))
-        slip_text_string(text, "empty: no element. ");
-    if (occurs(figure, SLIP_REGION_NEVER))
-        slip_text_string(text, "never: a chain could pass, but none can. ");
-    slip_text_char(text, '\n');
-    if (occurs(figure, SLIP_REGION_DIAGONAL))
-        slip_text_string(text, "up x,y (down x,y): elements on rising (falling) chains; A puts "
-                               "each x further right\nand y higher than B.\n");
+    slip_text_string(text,
+                     "w0, w1, ... are the numbers of columns in the strips, h0, h1, ... those of "
+                     "rows.\n"
+                     "free: any elements. empty: no element. never: as empty, though A and B move "
+                     "elements\nhere on both axes. up x,y (down x,y): elements on rising (falling) "
+                     "chains; A puts each\nx further right and y higher than B.\n");
 }
