@@ -90,4 +90,7 @@ SLIP_API bool slip_row_is_right(const struct slip_row_verdict *verdict);
 SLIP_API const struct slip_missing *slip_verifier_missing(const struct slip_verifier *verifier,
                                                           size_t *count);
 
+/* row = a row without claims about what is missing (residues only where they matter). */
+SLIP_API void slip_missing_row(struct slip_table_row *row, const struct slip_missing *missing);
+
 #endif

@@ -115,6 +115,20 @@ static slip_status add_missing(struct slip_verifier *verifier, const struct slip
     return SLIP_OK;
 }
 
+void slip_missing_row(struct slip_table_row *row, const struct slip_missing *missing)
+{
+    int8_t dx[SLIP_CASE_STRIPS], dy[SLIP_CASE_STRIPS];
+    slip_table_row_init(row);
+    row->name = missing->name;
+    slip_case_displacements(dx, dy, &missing->name);
+    for (uint32_t i = 0; i <= 2 * missing->name.r; i++) {
+        if (abs(dx[i]) > 1)
+            row->column_residue[i] = (int8_t)missing->column_residue[i];
+        if (abs(dy[i]) > 1)
+            row->row_residue[i] = (int8_t)missing->row_residue[i];
+    }
+}
+
 static slip_status find_missing(struct slip_verifier *verifier, const struct slip_hooks *hooks,
                                 struct slip_error *err)
 {

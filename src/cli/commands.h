@@ -13,5 +13,6 @@ extern const struct command command_fit;
 extern const struct command command_predict;
 extern const struct command command_cases;
 extern const struct command command_explain;
+extern const struct command command_verify;
 
 #endif

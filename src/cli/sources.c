@@ -140,13 +140,14 @@ static int read_request(const struct call *call, const struct token *token,
                             : stray(call, token, "--family");
 }
 
-static int read_requests(const struct call *call, size_t skip, struct requests *requests)
+static int read_requests(const struct call *call, size_t skip, const struct token *own,
+                         struct requests *requests)
 {
     for (size_t i = 0; i < call->count; i++) {
         const struct token *token = &call->tokens[i];
         bool skipped = !token->option && skip;
         skip -= skipped;
-        int code = skipped ? 0 : read_request(call, token, requests);
+        int code = skipped || token == own ? 0 : read_request(call, token, requests);
         if (code)
             return code;
     }
@@ -214,12 +215,18 @@ static int add(const struct call *call, size_t skip, struct slip_source *source,
 
 int sources_open(const struct call *call, size_t skip, struct slip_source **source)
 {
+    return sources_open_besides(call, skip, NULL, source);
+}
+
+int sources_open_besides(const struct call *call, size_t skip, const struct token *own,
+                         struct slip_source **source)
+{
     struct requests requests = {.all = calloc(call->count + 1, sizeof *requests.all)};
     struct slip_error err = SLIP_ERROR_NONE;
     *source = NULL;
     if (!requests.all)
         return complain_memory();
-    int code = read_requests(call, skip, &requests);
+    int code = read_requests(call, skip, own, &requests);
     if (!code && slip_source_new(source, &err) != SLIP_OK)
         code = complain_error(call, &err);
     for (size_t i = 0; i < requests.count && !code; i++)

@@ -15,6 +15,10 @@ extern const struct option_group sources_options;
  */
 int sources_open(const struct call *call, size_t skip, struct slip_source **source);
 
+/* The same, passing over one token that is an option of the command's own (a --length). */
+int sources_open_besides(const struct call *call, size_t skip, const struct token *own,
+                         struct slip_source **source);
+
 /* Whether any permutations are given, by the same rules. */
 bool sources_given(const struct call *call, size_t skip);
 
