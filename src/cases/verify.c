@@ -4,7 +4,23 @@
 #include "cases/verifier.h"
 #include "slipcase/pair.h"
 
+/* The hooks with so many bytes less to hold. */
+static struct slip_hooks less(const struct slip_hooks *hooks, double bytes)
+{
+    struct slip_hooks left = hooks ? *hooks : (struct slip_hooks){0};
+    if (left.memory)
+        left.memory = bytes < (double)left.memory ? left.memory - (uint64_t)bytes : 1;
+    return left;
+}
+
 /* ---- what depends on the length ---- */
+
+static double parts_bytes(const struct length_parts *parts)
+{
+    return (double)parts->layouts.count * ((double)sizeof(struct layout) + 4.0 * parts->n) +
+           (double)parts->candidates.capacity * sizeof(struct candidate) +
+           (double)parts->numbering.gap_count * parts->numbering.r * sizeof(uint32_t);
+}
 
 static slip_status prepare(struct slip_verifier *verifier, uint32_t n,
                            const struct slip_hooks *hooks, struct slip_error *err)
@@ -16,14 +32,15 @@ static slip_status prepare(struct slip_verifier *verifier, uint32_t n,
     layouts_clear(&parts->layouts);
     numbering_clear(&parts->numbering);
     parts->made = false;
+    parts->n = n;
     slip_status status = numbering_make(&parts->numbering, n, verifier->table->r, hooks, err);
     if (status == SLIP_OK)
         status = layouts_make(&parts->layouts, &parts->numbering, !verifier->own, hooks, err);
+    struct slip_hooks left = less(hooks, parts_bytes(parts));
     if (status == SLIP_OK)
         status = candidates_make(&parts->candidates, &verifier->images, &parts->layouts,
-                                 &parts->numbering, verifier->own, hooks, err);
+                                 &parts->numbering, verifier->own, &left, err);
     parts->made = status == SLIP_OK;
-    parts->n = n;
     return status;
 }
 
@@ -226,10 +243,12 @@ slip_status slip_verifier_check(struct slip_verifier *verifier, const struct sli
     slip_status status = prepare(verifier, p->n, hooks, err);
     if (status == SLIP_OK)
         status = find_length(verifier, p->n, &index, err);
+    struct slip_hooks left = less(hooks, parts_bytes(&verifier->parts));
     if (status == SLIP_OK)
-        status = list_coinciding(verifier, p, hooks, err);
+        status = list_coinciding(verifier, p, &left, err);
+    left = less(&left, (double)verifier->coinciding.capacity * sizeof(uint64_t));
     if (status == SLIP_OK)
-        status = list_claimed(verifier, p, hooks, err);
+        status = list_claimed(verifier, p, &left, err);
     for (size_t i = 0; !verifier->own && status == SLIP_OK && i < verifier->coinciding.count; i++)
         verdicts_coinciding(verifier, p, verifier->coinciding.keys[i]);
     if (status == SLIP_OK && verifier->by_class) {

@@ -110,16 +110,27 @@ static slip_status read_case(const struct file *file, struct slip_case *c, uint3
     struct slip_error why = SLIP_ERROR_NONE;
     size_t begin[4], length;
     slip_text_init(&name);
-    for (size_t i = 0; i < 4; i++) {
+    slip_status status = SLIP_OK;
+    for (size_t i = 0; i < 4 && status == SLIP_OK; i++) {
         begin[i] = name.length + (i > 0);
         if (i)
             slip_text_char(&name, '/');
         const char *text = cell(file, order[i], &length);
         slip_text_bytes(&name, text, length);
+        size_t good = strspn(text, i < 2 ? "AB" : "123456789");
+        if (good < length)
+            status = slip_fail_at(err, SLIP_DATA,
+                                  file->fields.items[file->place[order[i]]].column + good, 1,
+                                  i < 2 ? "expected lines as letters A and B, such as AABB"
+                                        : "expected the rows of the points as digits, such as 21");
     }
-    slip_status status = slip_text_ok(&name, err);
     if (status == SLIP_OK)
-        status = slip_case_parse(c, slip_text_get(&name), name.length, &why);
+        status = slip_text_ok(&name, err);
+    if (status != SLIP_OK) {
+        slip_text_clear(&name);
+        return status;
+    }
+    status = slip_case_parse(c, slip_text_get(&name), name.length, &why);
     if (status == SLIP_DATA) {
         size_t i = 3;
         while (i > 0 && why.column <= begin[i])
