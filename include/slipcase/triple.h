@@ -37,6 +37,21 @@ struct slip_triple {
     } chain[3];
 };
 
+/* How the moved elements lie. */
+enum slip_triple_kind {
+    SLIP_TRIPLE_WHOLE,   /* an interval: the values of the chains interleave all together */
+    SLIP_TRIPLE_SPLIT,   /* one range of positions, two of values */
+    SLIP_TRIPLE_INVERSE, /* one range of values, two of positions: split in the inverse */
+    SLIP_TRIPLE_KINDS
+};
+
+static inline enum slip_triple_kind slip_triple_kind(const struct slip_triple *triple)
+{
+    return triple->inverse ? SLIP_TRIPLE_INVERSE
+           : triple->split ? SLIP_TRIPLE_SPLIT
+                           : SLIP_TRIPLE_WHOLE;
+}
+
 /* Receives triple couplings; any status but SLIP_OK ends the run, which returns it. */
 typedef slip_status (*slip_triple_visit)(void *context, const struct slip_triple *triple,
                                          struct slip_error *err);
@@ -62,6 +77,11 @@ SLIP_API slip_status slip_triple_each(const struct slip_perm *p, slip_triple_vis
 /* *count = T(p), with hooks->threads threads. */
 SLIP_API slip_status slip_triple_count(uint64_t *count, const struct slip_perm *p,
                                        const struct slip_hooks *hooks, struct slip_error *err);
+
+/* The same by kind; they add up to T(p). */
+SLIP_API slip_status slip_triple_kinds(uint64_t counts[SLIP_TRIPLE_KINDS],
+                                       const struct slip_perm *p, const struct slip_hooks *hooks,
+                                       struct slip_error *err);
 
 /* Bytes that the functions above hold at once with this many threads, beside p. */
 SLIP_API double slip_triple_memory(uint32_t n, unsigned threads);

@@ -9,6 +9,8 @@ extern const struct command command_insert;
 extern const struct command command_delete;
 extern const struct command command_contains;
 extern const struct command command_statistics;
+extern const struct command command_ceiling;
+extern const struct command command_defect;
 extern const struct command command_fit;
 extern const struct command command_predict;
 extern const struct command command_cases;

@@ -10,9 +10,9 @@
 #include "cli/message.h"
 
 static const struct command *const commands[] = {
-    &command_count,    &command_list,       &command_insert, &command_delete,
-    &command_contains, &command_statistics, &command_fit,    &command_predict,
-    &command_cases,    &command_explain,    &command_verify,
+    &command_count,      &command_list,    &command_insert,  &command_delete, &command_contains,
+    &command_statistics, &command_fit,     &command_predict, &command_cases,  &command_explain,
+    &command_verify,     &command_ceiling, &command_defect,
 };
 enum { COMMANDS = sizeof commands / sizeof *commands };
 

@@ -1,10 +1,8 @@
 /* The engine that counts without results: ceiling minus defect. */
+#include "slipcase/defect.h"
 #include "slipcase/engine.h"
-#include "slipcase/ceiling.h"
-#include "slipcase/staircase.h"
-#include "slipcase/triple.h"
 
-enum { MOST = 3 }; /* insertions */
+enum { MOST = SLIP_DEFECT_MOST }; /* insertions */
 
 static const char *status_for(uint32_t r)
 {
@@ -15,10 +13,11 @@ static slip_status accepts(const struct slip_perm *p, uint32_t r, const struct s
                            struct slip_error *err)
 {
     if (r > MOST)
-        return slip_fail(err, SLIP_USAGE,
-                         "the engine formula counts up to %d insertions, not %u; canonical and store "
-                         "count more",
-                         MOST, r);
+        return slip_fail(
+            err, SLIP_USAGE,
+            "the engine formula counts up to %d insertions, not %u; canonical and store "
+            "count more",
+            MOST, r);
     if (r == MOST && p->n > SLIP_TRIPLE_LONGEST)
         return slip_fail(err, SLIP_LIMIT, "length %u; the formula takes lengths up to %d", p->n,
                          SLIP_TRIPLE_LONGEST);
@@ -31,56 +30,17 @@ static slip_status accepts(const struct slip_perm *p, uint32_t r, const struct s
     return slip_hooks_afford(hooks, bytes, "counting by the formula", err);
 }
 
-struct sums {
-    uint64_t staircases, weight;
-};
-
-static slip_status add(void *context, const struct slip_staircase *staircase,
-                       struct slip_error *err)
-{
-    struct sums *sums = context;
-    (void)err;
-    sums->staircases++;
-    sums->weight += slip_staircase_joining(staircase) + slip_staircase_doubled(staircase);
-    return SLIP_OK;
-}
-
-/* distinct = ceiling - staircases, for r = 2. For r = 3: ceiling - staircases (n^2 + 4n + 5) +
- * weight - triples. */
-static void combine(mpz_t distinct, uint32_t n, uint32_t r, const struct sums *sums,
-                    uint64_t triples)
-{
-    mpz_t term;
-    mpz_init(term);
-    if (r == 3) {
-        mpz_set_ui(term, n);
-        mpz_add_ui(term, term, 4);
-        mpz_mul_ui(term, term, n);
-        mpz_add_ui(term, term, 5);
-        mpz_mul_ui(term, term, sums->staircases);
-        mpz_add_ui(distinct, distinct, sums->weight);
-        mpz_sub_ui(distinct, distinct, triples);
-    } else {
-        mpz_set_ui(term, sums->staircases);
-    }
-    mpz_sub(distinct, distinct, term);
-    mpz_clear(term);
-}
-
 static slip_status count(mpz_t distinct, const struct slip_perm *p, uint32_t r,
                          const struct slip_hooks *hooks, struct slip_error *err)
 {
-    struct sums sums = {0, 0};
-    uint64_t triples = 0;
+    struct slip_defect defect;
+    slip_defect_init(&defect);
     slip_status status = accepts(p, r, hooks, err);
     if (status == SLIP_OK)
-        status = slip_ceiling(distinct, p->n, r, err);
-    if (status == SLIP_OK && r >= 2)
-        status = slip_staircase_each(p, add, &sums, hooks, err);
-    if (status == SLIP_OK && r == 3)
-        status = slip_triple_count(&triples, p, hooks, err);
+        status = slip_defect_find(&defect, p, r, hooks, err);
     if (status == SLIP_OK)
-        combine(distinct, p->n, r, &sums, triples);
+        mpz_set(distinct, defect.distinct);
+    slip_defect_clear(&defect);
     return status;
 }
 

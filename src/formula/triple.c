@@ -157,16 +157,17 @@ slip_status slip_triple_each(const struct slip_perm *p, slip_triple_visit visit,
 /* ---- counting ---- */
 
 struct tally {
-    bool inverse;
-    uint64_t count;
+    uint64_t whole, split; /* of the inverse, only the split ones are wanted */
 };
 
 static bool count_one(void *context, const struct coupling *coupling)
 {
     struct tally *tally = context;
     struct judged judged;
-    if (coupling_judge(coupling, &judged) && (judged.split || !tally->inverse))
-        tally->count++;
+    if (coupling_judge(coupling, &judged)) {
+        tally->split += judged.split;
+        tally->whole += !judged.split;
+    }
     return true;
 }
 
@@ -198,8 +199,8 @@ static unsigned threads_of(const struct slip_perm *p, const struct slip_hooks *h
 #endif
 }
 
-slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned left_out,
-                          const struct slip_hooks *hooks, struct slip_error *err)
+slip_status triples_count(uint64_t counts[SLIP_TRIPLE_KINDS], const struct slip_perm *p,
+                          unsigned left_out, const struct slip_hooks *hooks, struct slip_error *err)
 {
     enum { PIECE = 64 };
     unsigned threads = threads_of(p, hooks);
@@ -207,13 +208,14 @@ slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned l
     slip_status status = tables_new(&t, p, threads, hooks, err);
     if (status != SLIP_OK)
         return status;
-    uint64_t sum = 0;
+    memset(counts, 0, SLIP_TRIPLE_KINDS * sizeof *counts);
     uint32_t pieces = p->n / PIECE + 1, done = 0;
     for (int inverse = 0; inverse <= 1 && status == SLIP_OK; inverse++, turn(&t.board)) {
-#pragma omp parallel for schedule(dynamic) num_threads(threads) reduction(+ : sum)
+        uint64_t whole = 0, split = 0;
+#pragma omp parallel for schedule(dynamic) num_threads(threads) reduction(+ : whole, split)
         for (uint32_t piece = 0; piece < pieces; piece++) {
             struct scratch scratch = scratch_of(&t, thread_number());
-            struct tally tally = {inverse, 0};
+            struct tally tally = {0, 0};
             slip_status now;
 #pragma omp atomic read
             now = status;
@@ -221,7 +223,8 @@ slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned l
                 if (piece * PIECE + k < p->n)
                     scan_from(&t.board, &scratch, piece * PIECE + k + 1, left_out, count_one,
                               &tally);
-            sum += tally.count;
+            whole += tally.whole;
+            split += tally.split;
 #pragma omp critical(slip_triple_hooks)
             if (status == SLIP_OK) {
                 slip_hooks_progress(hooks, ++done, 2.0 * pieces);
@@ -230,14 +233,27 @@ slip_status triples_count(uint64_t *count, const struct slip_perm *p, unsigned l
                 status = now;
             }
         }
+        if (!inverse)
+            counts[SLIP_TRIPLE_WHOLE] = whole;
+        counts[inverse ? SLIP_TRIPLE_INVERSE : SLIP_TRIPLE_SPLIT] = split;
     }
     free(t.breaks);
-    *count = sum;
     return status;
+}
+
+slip_status slip_triple_kinds(uint64_t counts[SLIP_TRIPLE_KINDS], const struct slip_perm *p,
+                              const struct slip_hooks *hooks, struct slip_error *err)
+{
+    return triples_count(counts, p, without(hooks), hooks, err);
 }
 
 slip_status slip_triple_count(uint64_t *count, const struct slip_perm *p,
                               const struct slip_hooks *hooks, struct slip_error *err)
 {
-    return triples_count(count, p, without(hooks), hooks, err);
+    uint64_t counts[SLIP_TRIPLE_KINDS];
+    slip_status status = slip_triple_kinds(counts, p, hooks, err);
+    if (status == SLIP_OK)
+        *count =
+            counts[SLIP_TRIPLE_WHOLE] + counts[SLIP_TRIPLE_SPLIT] + counts[SLIP_TRIPLE_INVERSE];
+    return status;
 }
