@@ -5,100 +5,19 @@
  * distinct results, and release everything; the store counts insertion sequences besides.
  */
 
-#include <malloc.h>
 #include <stdio.h>
 #include <stdlib.h>
-#include <string.h>
-
-#include <uthash.h>
 
 #include "bench/harness.h"
+#include "bench/plain.h"
 #include "count/levels.h"
 #include "slipcase/random.h"
-
-struct job {
-    struct slip_perm p;
-    uint32_t r;
-};
-
-/* ---- the plain use ---- */
-
-struct plain {
-    UT_hash_handle hh;
-    unsigned char word[];
-};
-
-static void plain_add(struct plain **set, const unsigned char *word, unsigned length)
-{
-    struct plain *entry;
-    HASH_FIND(hh, *set, word, length, entry);
-    if (entry)
-        return;
-    entry = malloc(sizeof *entry + length);
-    if (!entry)
-        exit(3); /* uthash does the same when its own memory is short */
-    memcpy(entry->word, word, length);
-    HASH_ADD_KEYPTR(hh, *set, entry->word, length, entry);
-}
-
-/* All insertions into a word of this length. */
-static void plain_insert_all(struct plain **set, const unsigned char *word, unsigned length)
-{
-    unsigned char result[256];
-    for (unsigned value = 1; value <= length + 1; value++)
-        for (unsigned slot = 0; slot <= length; slot++) {
-            for (unsigned i = 0; i < length; i++)
-                result[i + (i >= slot)] = (unsigned char)(word[i] + (word[i] >= value));
-            result[slot] = (unsigned char)value;
-            plain_add(set, result, length + 1);
-        }
-}
-
-static void plain_release(struct plain *set)
-{
-    struct plain *entry, *next;
-    HASH_ITER(hh, set, entry, next)
-    {
-        HASH_DEL(set, entry);
-        free(entry);
-    }
-}
-
-/* What is held: the blocks as malloc rounds them, with its word before each, and the table. */
-static double plain_bytes(struct plain *set)
-{
-    double bytes = (double)set->hh.tbl->num_buckets * sizeof(UT_hash_bucket);
-    for (struct plain *entry = set; entry; entry = entry->hh.next)
-        bytes += (double)(malloc_usable_size(entry) + sizeof(size_t));
-    return bytes;
-}
-
-static bool count_plainly(void *context, struct bench_outcome *outcome)
-{
-    const struct job *job = context;
-    struct plain *set = NULL;
-    unsigned char word[256];
-    for (uint32_t i = 0; i < job->p.n; i++)
-        word[i] = (unsigned char)job->p.at[i];
-    plain_add(&set, word, job->p.n);
-    for (uint32_t t = 0; t < job->r; t++) {
-        struct plain *next = NULL;
-        for (struct plain *entry = set; entry; entry = entry->hh.next)
-            plain_insert_all(&next, entry->word, job->p.n + t);
-        plain_release(set);
-        set = next;
-    }
-    outcome->results = HASH_COUNT(set);
-    outcome->bytes = plain_bytes(set);
-    plain_release(set);
-    return true;
-}
 
 /* ---- the store ---- */
 
 static bool count_by_store(void *context, struct bench_outcome *outcome)
 {
-    const struct job *job = context;
+    const struct bench_job *job = context;
     struct slip_error err = SLIP_ERROR_NONE;
     struct slip_store *store;
     if (slip_levels_build(&store, &job->p, job->r, NULL, &err) != SLIP_OK) {
@@ -126,7 +45,7 @@ static const struct bench_column columns[] = {
 };
 enum { COLUMNS = sizeof columns / sizeof *columns };
 
-static void print_row(const struct job *job, const char *kind, const struct bench_pair *pair)
+static void print_row(const struct bench_job *job, const char *kind, const struct bench_pair *pair)
 {
     char text[COLUMNS][32];
     const char *cells[COLUMNS];
@@ -147,13 +66,13 @@ static void print_row(const struct job *job, const char *kind, const struct benc
 
 static bool measure(uint32_t n, uint32_t r, bool random, unsigned runs)
 {
-    struct job job = {.r = r};
+    struct bench_job job = {.r = r};
     struct slip_random seed = {1};
     struct bench_pair pair;
     slip_perm_init(&job.p);
     bool done = (random ? slip_random_perm(&job.p, n, &seed, NULL)
                         : slip_perm_identity(&job.p, n, NULL)) == SLIP_OK;
-    done = done && bench_compare(&pair, count_plainly, count_by_store, &job, runs);
+    done = done && bench_compare(&pair, bench_plain, count_by_store, &job, runs);
     if (done)
         print_row(&job, random ? "random" : "identity", &pair);
     slip_perm_clear(&job.p);

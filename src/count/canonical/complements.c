@@ -160,7 +160,8 @@ static void serve(struct slip_canonical_complements *c, uint32_t i, uint32_t fro
     for (uint32_t position = start; position <= last && c->size; position++)
         if (c->row[position] > low && c->row[position] < high)
             serve_point(c, i, position);
-    if (!used)
+    /* What serves the next element must stand right of the wildcard. */
+    if (!used && (i + 1 == q->n || i + 1 + spare >= c->first))
         serve_wild(c, i, from);
 }
 
