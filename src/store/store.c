@@ -20,11 +20,13 @@ static uint64_t *key_of(struct slip_entry *entry)
     return (uint64_t *)(entry + 1);
 }
 
-/* The least power of two with at most one entry a bucket. */
-static unsigned table_log2(double expected)
+enum { DENSE_LOG2 = 2 };
+
+/* The least power of two with at most 2^load_log2 entries a bucket. */
+static unsigned table_log2(double expected, unsigned load_log2)
 {
     unsigned log2 = LEAST_LOG2;
-    while (log2 < GREATEST_LOG2 && (double)((uint64_t)1 << log2) < expected)
+    while (log2 < GREATEST_LOG2 && (double)((uint64_t)1 << log2 << load_log2) < expected)
         log2++;
     return log2;
 }
@@ -40,10 +42,20 @@ static uint64_t bucket_bytes(unsigned log2)
     return (uint64_t)sizeof(UT_hash_bucket) << log2;
 }
 
-double slip_store_estimate(uint32_t length, double expected)
+static double estimate(uint32_t length, double expected, unsigned load_log2)
 {
     return slip_arena_estimate(entry_bytes(slip_packed_words(length)), expected) +
-           (double)bucket_bytes(table_log2(expected)) + (double)fixed_bytes();
+           (double)bucket_bytes(table_log2(expected, load_log2)) + (double)fixed_bytes();
+}
+
+double slip_store_estimate(uint32_t length, double expected)
+{
+    return estimate(length, expected, 0);
+}
+
+double slip_store_estimate_dense(uint32_t length, double expected)
+{
+    return estimate(length, expected, DENSE_LOG2);
 }
 
 uint64_t slip_store_bytes(const struct slip_store *store)
@@ -86,8 +98,8 @@ static slip_status make_table(struct slip_store *store, struct slip_error *err)
     return SLIP_OK;
 }
 
-slip_status slip_store_open(struct slip_store **out, uint32_t length, uint64_t expected,
-                            uint64_t memory, struct slip_error *err)
+static slip_status open_store(struct slip_store **out, uint32_t length, uint64_t expected,
+                              unsigned load_log2, uint64_t memory, struct slip_error *err)
 {
     *out = NULL;
     if (length > SLIP_PACKED_LONGEST)
@@ -98,7 +110,8 @@ slip_status slip_store_open(struct slip_store **out, uint32_t length, uint64_t e
         return slip_fail_memory(err, sizeof *store);
     store->length = length;
     store->words = slip_packed_words(length);
-    store->first_log2 = table_log2((double)expected);
+    store->first_log2 = table_log2((double)expected, load_log2);
+    store->load_log2 = load_log2;
     store->memory = memory;
     store->most = UINT32_MAX;
     slip_arena_init(&store->arena, entry_bytes(store->words), expected);
@@ -108,6 +121,18 @@ slip_status slip_store_open(struct slip_store **out, uint32_t length, uint64_t e
     else
         free(store);
     return status;
+}
+
+slip_status slip_store_open(struct slip_store **store, uint32_t length, uint64_t expected,
+                            uint64_t memory, struct slip_error *err)
+{
+    return open_store(store, length, expected, 0, memory, err);
+}
+
+slip_status slip_store_open_dense(struct slip_store **store, uint32_t length, uint64_t expected,
+                                  uint64_t memory, struct slip_error *err)
+{
+    return open_store(store, length, expected, DENSE_LOG2, memory, err);
 }
 
 void slip_store_close(struct slip_store *store)
@@ -134,11 +159,12 @@ static slip_status widen(struct slip_store *store, struct slip_error *err)
     return failed ? slip_fail_memory(err, more) : SLIP_OK;
 }
 
-/* Whether the table has a bucket for each entry, with one more. */
+/* Whether the table's load stays within bounds with one more entry. */
 static inline bool table_is_wide(const struct slip_store *store)
 {
     const UT_hash_table *table = store->head->hh.tbl;
-    return table->num_items < table->num_buckets || table->log2_num_buckets == GREATEST_LOG2;
+    return table->num_items < (uint64_t)table->num_buckets << store->load_log2 ||
+           table->log2_num_buckets == GREATEST_LOG2;
 }
 
 /* Whether one more entry fits as things are. */
@@ -262,6 +288,38 @@ slip_status slip_store_add(struct slip_store *store, const uint64_t *keys, size_
     default:
         return add_all(store, keys, count, store->words, weights, err);
     }
+}
+
+/* The same pipeline for keys that are known to be new: only the first entry of the bucket is
+ * needed, which is going to be the second. */
+static inline slip_status add_all_new(struct slip_store *store, const uint64_t *keys, size_t count,
+                                      uint32_t words, struct slip_error *err)
+{
+    unsigned hashes[HASHES];
+    slip_status status = SLIP_OK;
+    for (size_t i = 0; i < count + 2 * LAG && status == SLIP_OK; i++) {
+        if (i < count) {
+            hashes[i % HASHES] = slip_hash_words(keys + i * words, words);
+            __builtin_prefetch(bucket_of(store, hashes[i % HASHES]), 1);
+        }
+        if (i - LAG < count) {
+            const UT_hash_handle *first = bucket_of(store, hashes[(i - LAG) % HASHES])->hh_head;
+            if (first)
+                __builtin_prefetch(&first->hh_prev, 1);
+        }
+        size_t k = i - 2 * LAG; /* wraps around, beyond count, before the first */
+        if (k < count)
+            status = add_new(store, keys + k * words, words, hashes[k % HASHES], 1, err);
+    }
+    return status;
+}
+
+slip_status slip_store_add_new(struct slip_store *store, const uint64_t *keys, size_t count,
+                               struct slip_error *err)
+{
+    if (store->words == 1)
+        return add_all_new(store, keys, count, 1, err);
+    return add_all_new(store, keys, count, store->words, err);
 }
 
 bool slip_store_find(const struct slip_store *store, const uint64_t *key, uint64_t *weight)

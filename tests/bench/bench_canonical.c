@@ -1,6 +1,6 @@
 /*
  * The canonical engine: counting against the plain use of uthash, masks of different widths,
- * streaming, and two threads.
+ * streaming, filling a set, and two threads.
  */
 
 #include <stdio.h>
@@ -10,6 +10,7 @@
 #include "bench/harness.h"
 #include "bench/plain.h"
 #include "count/canonical/canonical.h"
+#include "slipcase/fill.h"
 #include "slipcase/random.h"
 
 enum { BLOCKS = 9 };
@@ -280,11 +281,66 @@ static void measure_streams(bool all)
                 measure_stream(sizes[i][0], sizes[i][1], random);
 }
 
+/* ---- filling a set ---- */
+
+static const struct bench_column filling[] = {
+    {"n", 3, "length of the permutation"},
+    {"r", 2, "insertions"},
+    {"perm", 8, "the identity, or a random permutation (seed 1)"},
+    {"results", 12, "distinct results"},
+    {"ns", 7, "nanoseconds a result to count, make and fill the set, median"},
+    {"bytes", 7, "bytes held a result"},
+};
+enum { FILLING = sizeof filling / sizeof *filling };
+
+static bool fill(void *context, struct bench_outcome *outcome)
+{
+    const struct task *task = context;
+    struct slip_store *store;
+    if (slip_fill_results(&store, &task->job.p, task->job.r, NULL, NULL) != SLIP_OK)
+        return false;
+    outcome->results = slip_store_size(store);
+    outcome->bytes = (double)slip_store_bytes(store);
+    slip_store_close(store);
+    return true;
+}
+
+static void measure_fill(uint32_t n, uint32_t r, bool random)
+{
+    struct task task;
+    struct bench_outcome outcome;
+    char text[FILLING][32];
+    const char *cells[FILLING];
+    task_set(&task, n, r, random);
+    double seconds = seconds_of(fill, &task, bench_now, 0.02, &outcome);
+    const double results = (double)outcome.results;
+    snprintf(text[0], sizeof *text, "%u", n);
+    snprintf(text[1], sizeof *text, "%u", r);
+    snprintf(text[2], sizeof *text, "%s", task.kind);
+    snprintf(text[3], sizeof *text, "%.0f", results);
+    snprintf(text[4], sizeof *text, "%.1f", 1e9 * seconds / results);
+    snprintf(text[5], sizeof *text, "%.1f", outcome.bytes / results);
+    for (size_t i = 0; i < FILLING; i++)
+        cells[i] = text[i];
+    bench_table_row(filling, FILLING, cells);
+    slip_perm_clear(&task.job.p);
+}
+
+static void measure_fills(void)
+{
+    static const uint32_t sizes[][2] = {{10, 3}, {12, 3}, {9, 4}, {16, 3}};
+    bench_table_begin("\nFilling a set with all results", filling, FILLING);
+    for (size_t i = 0; i < sizeof sizes / sizeof *sizes; i++)
+        for (int random = 0; random <= 1; random++)
+            measure_fill(sizes[i][0], sizes[i][1], random);
+}
+
 int main(int argc, char **argv)
 {
     const bool all = bench_long(argc, argv);
     measure_counts(all);
     measure_comparisons();
     measure_streams(all);
+    measure_fills();
     return 0;
 }
