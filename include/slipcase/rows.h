@@ -16,9 +16,13 @@ enum slip_engine_use {
  * engine that is not proved. */
 #define SLIP_ENGINE_ENDURED 1e10
 
+/* The most results, by estimate, that a choice has counted one by one at all. */
+#define SLIP_ENGINE_MOST 1e15
+
 /*
  * The fastest engine whose count is proved and that takes the job (and, for SLIP_ENGINE_LIST, can
- * list the results). Where an engine that is not proved takes the job too, and going through the
+ * list the results); SLIP_LIMIT when that would be going through more than SLIP_ENGINE_MOST results
+ * to count them. Where an engine that is not proved takes the job too, and going through the
  * results would mean more than SLIP_ENGINE_ENDURED of them, or no engine does that: for
  * SLIP_ENGINE_COUNT that engine, for SLIP_ENGINE_PROVED SLIP_LIMIT. The error when there is none
  * is that of the last engine asked. *engine is not changed then.

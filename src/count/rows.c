@@ -13,6 +13,21 @@ static slip_status not_proved(const struct slip_engine *engine, const struct sli
                      engine->name, r, slip_engine_status(engine, r), slip_count_estimate(p->n, r));
 }
 
+/* Whether the engine would be going through results for days. */
+static bool hopeless(const struct slip_engine *engine, const struct slip_perm *p, uint32_t r)
+{
+    /* into () and 1 every permutation of length n + r can be made: they need not be looked for */
+    return engine->visit && p->n > 1 && slip_count_estimate(p->n, r) > SLIP_ENGINE_MOST;
+}
+
+static slip_status too_many(const struct slip_perm *p, uint32_t r, struct slip_error *err)
+{
+    return slip_fail(err, SLIP_LIMIT,
+                     "about %.2g results: counting them would take more than a day, and is begun "
+                     "only by an engine that is named",
+                     slip_count_estimate(p->n, r));
+}
+
 slip_status slip_engine_choose(const struct slip_engine **engine, const struct slip_perm *p,
                                uint32_t r, enum slip_engine_use use, const struct slip_hooks *hooks,
                                struct slip_error *err)
@@ -30,6 +45,8 @@ slip_status slip_engine_choose(const struct slip_engine **engine, const struct s
         if (status != SLIP_OK)
             continue;
         if (slip_engine_proved(list[i], r)) {
+            if (use != SLIP_ENGINE_LIST && hopeless(list[i], p, r))
+                return too_many(p, r, err);
             *engine = list[i];
             return SLIP_OK;
         }
