@@ -1,6 +1,6 @@
 /* The engine that counts without results: ceiling minus defect. */
-#include "slipcase/defect.h"
 #include "slipcase/engine.h"
+#include "slipcase/defect.h"
 
 enum { MOST = SLIP_DEFECT_MOST }; /* insertions */
 
