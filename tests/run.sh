@@ -10,7 +10,7 @@ set -eu
 cd "$(dirname "$0")/.."
 
 build_packages="gcc libc6-dev make cmake libgmp-dev uthash-dev libcmocka-dev"
-extra_packages="python3 python3-networkx libflint-dev"
+extra_packages="python3 python3-networkx python3-jsonschema libflint-dev"
 
 case "$#:${1-}" in
 0:) all=no ;;
