@@ -76,6 +76,13 @@ extern SLIP_API const struct slip_engine slip_engine_canonical;
  */
 extern SLIP_API const struct slip_engine slip_engine_formula;
 
+/*
+ * Three insertions through classes of complements: slow, r = 3 and n <= 40, with nothing of the
+ * formula in it but the ceiling and the staircases. Not in the list of engines: a check that
+ * slip_check_engines asks. Its status says what it rests on.
+ */
+extern SLIP_API const struct slip_engine slip_engine_classes;
+
 /* ---- results in lexicographic order ---- */
 
 struct slip_results {
@@ -115,7 +122,8 @@ SLIP_API slip_status slip_brute_count(mpz_t distinct, const struct slip_perm *p,
                                       const struct slip_hooks *hooks, struct slip_error *err);
 
 /*
- * Counts the row with every engine that takes it and is not `used`, and compares: SLIP_DIFFERS
+ * Counts the row with every engine that takes it and is not `used`, and with slip_engine_classes
+ * where that takes it, and compares: SLIP_DIFFERS
  * with the names of the two engines and both figures. *engines (may be NULL): how many were
  * compared with.
  */

@@ -23,12 +23,13 @@ slip_status slip_check_engines(const mpz_t distinct, const struct slip_engine *u
     slip_status status = SLIP_OK;
     mpz_t other;
     mpz_init(other);
-    for (size_t i = 0; i < count && status == SLIP_OK; i++) {
-        if (list[i] == used || list[i]->accepts(p, r, hooks, NULL) != SLIP_OK)
+    for (size_t i = 0; i <= count && status == SLIP_OK; i++) {
+        const struct slip_engine *engine = i < count ? list[i] : &slip_engine_classes;
+        if (engine == used || engine->accepts(p, r, hooks, NULL) != SLIP_OK)
             continue;
-        status = list[i]->count(other, p, r, hooks, err);
+        status = engine->count(other, p, r, hooks, err);
         if (status == SLIP_OK && mpz_cmp(other, distinct))
-            status = differ(distinct, used, other, list[i], err);
+            status = differ(distinct, used, other, engine, err);
         compared++;
     }
     mpz_clear(other);
