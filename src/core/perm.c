@@ -123,13 +123,33 @@ slip_status slip_perm_inverse(struct slip_perm *q, const struct slip_perm *p,
     return status;
 }
 
+/* Writes the digits of value from `at` on and returns what follows them. */
+static char *write_digits(char *at, uint32_t value)
+{
+    char digits[10];
+    size_t from = sizeof digits;
+    do
+        digits[--from] = (char)('0' + value % 10);
+    while (value /= 10);
+    memcpy(at, digits + from, sizeof digits - from);
+    return at + (sizeof digits - from);
+}
+
 void slip_perm_write(struct slip_text *text, const struct slip_perm *p)
 {
+    size_t width = 2; /* the most that one element takes, with its blank */
+    for (uint32_t n = p->n; n >= 10; n /= 10)
+        width++;
     if (p->n == 0)
         slip_text_string(text, "()");
+    if (p->n == 0 || !slip_text_reserve(text, width * p->n))
+        return;
+    char *at = text->data + text->length;
     for (uint32_t i = 0; i < p->n; i++) {
         if (i)
-            slip_text_char(text, ' ');
-        slip_text_number(text, p->at[i]);
+            *at++ = ' ';
+        at = write_digits(at, p->at[i]);
     }
+    *at = '\0';
+    text->length = (size_t)(at - text->data);
 }
