@@ -139,6 +139,25 @@ static void visit_stops_with_the_callback(void **state)
     slip_perm_clear(&p);
 }
 
+/* What the engine holds are its pairs: here they need more than 10 kB, and fit into 10 MB. */
+static void keeps_to_the_memory_allowed(void **state)
+{
+    (void)state;
+    struct slip_perm p;
+    struct slip_error err = SLIP_ERROR_NONE;
+    mpz_t distinct;
+    mpz_init(distinct);
+    slip_perm_init(&p);
+    assert_int_equal(slip_perm_identity(&p, 100, NULL), SLIP_OK);
+    struct slip_hooks hooks = {.memory = 10000, .threads = 1};
+    assert_int_equal(slip_engine_canonical.count(distinct, &p, 3, &hooks, &err), SLIP_LIMIT);
+    assert_non_null(strstr(err.message, "of memory"));
+    hooks.memory = 10000000;
+    assert_int_equal(slip_engine_canonical.count(distinct, &p, 3, &hooks, &err), SLIP_OK);
+    mpz_clear(distinct);
+    slip_perm_clear(&p);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
@@ -147,6 +166,7 @@ int main(void)
         cmocka_unit_test(stops_when_interrupted),
         cmocka_unit_test(visit_stops_when_interrupted),
         cmocka_unit_test(visit_stops_with_the_callback),
+        cmocka_unit_test(keeps_to_the_memory_allowed),
     };
     return cmocka_run_group_tests_name("count/canonical_hooks", tests, NULL, NULL);
 }

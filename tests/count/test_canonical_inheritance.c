@@ -107,7 +107,7 @@ static void look_below(struct walk *walk, const struct node *node, const struct 
 static uint64_t look_at(const struct slip_perm *p, uint32_t deepest)
 {
     struct slip_canonical_problem problem;
-    struct slip_canonical_control control = {NULL, SLIP_OK, ATOMIC_FLAG_INIT};
+    struct slip_canonical_control control = {.calling = ATOMIC_FLAG_INIT};
     uint32_t added[64];
     struct walk walk = {.p = p, .deepest = deepest};
     slip_canonical_problem_set(&problem, p, deepest + 2);
@@ -163,7 +163,7 @@ static void complements_are_embeddings(void **state)
     for (uint32_t n = 1; n <= 9; n++)
         for (uint32_t r = 1; r <= 4; r++) {
             struct slip_canonical_problem problem;
-            struct slip_canonical_control control = {NULL, SLIP_OK, ATOMIC_FLAG_INIT};
+            struct slip_canonical_control control = {.calling = ATOMIC_FLAG_INIT};
             struct slip_canonical_complements *complements;
             uint8_t row[16];
             assert_int_equal(slip_random_perm(&p, n, &random, NULL), SLIP_OK);

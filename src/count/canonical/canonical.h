@@ -62,6 +62,7 @@ static inline void slip_canonical_add(struct slip_canonical_sum *sum, uint64_t c
 /* What the workers of one run share: they stop when `stop` is no longer SLIP_OK. */
 struct slip_canonical_control {
     const struct slip_hooks *hooks;
+    uint64_t memory; /* bytes that a worker may hold; 0: no limit */
     _Atomic int stop;
     atomic_flag calling; /* one worker at a time calls the hooks */
 };

@@ -55,6 +55,7 @@ struct slip_canonical_worker {
     int shared;             /* slot of p that the last wildcard must have, or -1 */
     int until;              /* then it must serve an element up to this */
     struct pairs fresh;     /* what was found */
+    uint64_t held;          /* bytes of pairs */
     uint64_t work;          /* units since the last poll */
     slip_status status;     /* SLIP_OK until the work must stop */
     struct slip_error *err;
@@ -79,18 +80,21 @@ static bool pairs_room(worker *w, struct pairs *pairs)
 {
     if (pairs->count < pairs->room)
         return true;
+    if (w->status != SLIP_OK)
+        return false;
+    const struct slip_hooks limit = {.memory = w->control->memory};
     uint32_t room = pairs->room ? 2 * pairs->room : 64;
     uint64_t bytes = (uint64_t)room * sizeof *pairs->at;
-    struct pair *at = NULL;
-    if (w->status == SLIP_OK)
-        w->status = slip_hooks_afford(w->control->hooks, (double)bytes, "this count", w->err);
-    if (w->status == SLIP_OK) {
-        at = realloc(pairs->at, bytes);
-        if (!at)
-            w->status = slip_fail_memory(w->err, bytes);
-    }
-    if (!at)
+    w->status =
+        slip_hooks_afford(&limit, (double)(w->held + bytes), "the canonical engine", w->err);
+    if (w->status != SLIP_OK)
         return false;
+    struct pair *at = realloc(pairs->at, bytes);
+    if (!at) {
+        w->status = slip_fail_memory(w->err, bytes);
+        return false;
+    }
+    w->held += bytes - (uint64_t)pairs->room * sizeof *pairs->at;
     pairs->at = at;
     pairs->room = room;
     return true;

@@ -206,6 +206,8 @@ static void stream_below(struct stream *s, const struct node *node)
                 child_masks(w, node, gap, slot, pair, child);
             else
                 grow_child(w, node, gap, slot, pair, in_gap);
+            if (w->status != SLIP_OK)
+                return; /* without memory a child lacks some of what is forbidden */
             stream_below(s, child);
         }
     }

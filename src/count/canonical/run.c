@@ -105,14 +105,15 @@ slip_status slip_canonical_count(mpz_t distinct, const struct slip_perm *p, uint
 {
     struct slip_canonical_problem problem;
     slip_canonical_problem_set(&problem, p, r);
-    struct run run = {.kernel = kernel,
-                      .problem = &problem,
-                      .control = {hooks, SLIP_OK, ATOMIC_FLAG_INIT},
-                      .err = err};
+    unsigned threads = threads_for(p, r, hooks);
+    struct run run = {
+        .kernel = kernel,
+        .problem = &problem,
+        .control = {hooks, hooks ? hooks->memory / threads : 0, SLIP_OK, ATOMIC_FLAG_INIT},
+        .err = err};
     slip_status status = slip_canonical_jobs_make(&run.jobs, &problem, err);
     if (status != SLIP_OK)
         return status;
-    unsigned threads = threads_for(p, r, hooks);
     if (threads == 1) {
         work(&run);
     } else {
@@ -136,7 +137,8 @@ slip_status slip_canonical_visit(const struct slip_perm *p, uint32_t r, bool mul
                                  const struct slip_hooks *hooks, struct slip_error *err)
 {
     struct slip_canonical_problem problem;
-    struct slip_canonical_control control = {hooks, SLIP_OK, ATOMIC_FLAG_INIT};
+    struct slip_canonical_control control = {hooks, hooks ? hooks->memory : 0, SLIP_OK,
+                                             ATOMIC_FLAG_INIT};
     struct slip_canonical_sink sink = {multiplicities, visit, context};
     struct slip_canonical_worker *worker;
     slip_canonical_problem_set(&problem, p, r);
