@@ -17,8 +17,9 @@ SLIP_API double slip_store_estimate(uint32_t length, double expected);
 
 /*
  * An empty store for permutations of this length (0..255), its table sized for `expected` of
- * them; it takes more, up to 2^32 - 1. memory: bytes it may hold, 0 for no limit. SLIP_LIMIT when
- * the table alone is over it or malloc fails; *store is NULL then.
+ * them; room for as many entries is taken in one piece when the first one comes. It takes more
+ * permutations than expected, up to 2^32 - 1. memory: bytes it may hold, 0 for no limit.
+ * SLIP_LIMIT when the table alone is over it or malloc fails; *store is NULL then.
  */
 SLIP_API slip_status slip_store_open(struct slip_store **store, uint32_t length, uint64_t expected,
                                      uint64_t memory, struct slip_error *err);
@@ -28,8 +29,9 @@ SLIP_API void slip_store_close(struct slip_store *store);
 
 /*
  * Adds weights[i] (1 when weights is NULL) to each of the `count` keys, which enter the set when
- * they are new. On SLIP_LIMIT (memory, or a weight beyond 64 bits) a part of the batch may have
- * been added.
+ * they are new. On SLIP_LIMIT (memory, 2^32 - 1 permutations, or a weight beyond 64 bits) a part
+ * of the batch may have been added. Looked up many at a time: batches of some hundred keys are
+ * several times faster than single ones.
  */
 SLIP_API slip_status slip_store_add(struct slip_store *store, const uint64_t *keys, size_t count,
                                     const uint64_t *weights, struct slip_error *err);

@@ -108,7 +108,6 @@ static slip_status open_store(struct slip_store **out, uint32_t length, uint64_t
     struct slip_store *store = calloc(1, sizeof *store);
     if (!store)
         return slip_fail_memory(err, sizeof *store);
-    store->length = length;
     store->words = slip_packed_words(length);
     store->first_log2 = table_log2((double)expected, load_log2);
     store->load_log2 = load_log2;
@@ -212,8 +211,9 @@ static inline slip_status add_one(struct slip_store *store, const uint64_t *key,
     HASH_FIND_BYHASHVALUE(hh, store->head, key, 8 * words, hash, entry);
     if (!entry)
         return add_new(store, key, words, hash, weight, err);
-    if (__builtin_add_overflow(entry->weight, weight, &entry->weight))
+    if (weight > UINT64_MAX - entry->weight)
         return slip_fail(err, SLIP_LIMIT, "the weight of a permutation is beyond 64 bits");
+    entry->weight += weight;
     return SLIP_OK;
 }
 

@@ -10,7 +10,6 @@ struct slip_store {
     struct slip_entry *head; /* what uthash calls the head: an entry before the first, in no bucket
                               * and in no arena, so that the table exists while the set is empty */
     struct slip_arena arena; /* the entries, in order of addition */
-    uint32_t length;         /* of every permutation in the set */
     uint32_t words;          /* 64-bit words a key */
     unsigned first_log2;     /* the table was made with 2^first_log2 buckets */
     unsigned load_log2;      /* it is doubled beyond 2^load_log2 entries a bucket */

@@ -217,6 +217,9 @@ static void refuses_what_does_not_fit(void **state)
     assert_int_equal(slip_store_add(store, keys, 1, NULL, &err), SLIP_OK);
     assert_int_equal(slip_store_add(store, keys, 1, NULL, &err), SLIP_LIMIT);
     assert_non_null(strstr(err.message, "beyond 64 bits"));
+    uint64_t weight;
+    assert_true(slip_store_find(store, keys, &weight));
+    assert_true(weight == UINT64_MAX); /* as it was */
     slip_store_close(store);
 }
 
