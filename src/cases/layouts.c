@@ -110,7 +110,7 @@ static void lay_word(struct layouts *layouts, const char *word, const struct num
 {
     uint32_t width[SLIP_TABLE_STRIPS] = {0}, strips = 2 * layouts->r + 1;
     struct word_layouts *of_word = &layouts->words[layouts->word_count++];
-    strcpy(of_word->word, word);
+    memcpy(of_word->word, word, strlen(word) + 1);
     of_word->begin = layouts->count;
     width[strips - 1] = layouts->n;
     do {

@@ -22,7 +22,7 @@ struct tables {
 double slip_triple_memory(uint32_t n, unsigned threads)
 {
     return 2.0 * sizeof(uint32_t) * ((double)n + 2) * (1.0 + threads) +
-           6.0 * sizeof(uint64_t) * (n / 64 + 1);
+           6.0 * sizeof(uint64_t) * ((double)n / 64 + 1);
 }
 
 /* Fills the six sets of breaks. */
