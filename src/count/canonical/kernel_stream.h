@@ -2,13 +2,15 @@
 
 enum { BATCH_WORDS = 2048 }; /* 16 KiB of keys: they stay in the first cache */
 
+typedef uint64_t two_words __attribute__((vector_size(16)));
+
 struct stream {
     worker *worker;
     const struct slip_canonical_sink *sink;
     struct slip_canonical_complements *complements; /* NULL when not asked for */
     uint32_t length, words;
-    uint8_t *rows;  /* [r][length]: at each level the node's values by position */
-    uint64_t *ones; /* [length][words], for leaf_words() */
+    uint8_t *rows;   /* [r][length]: at each level the node's values by position */
+    two_words *ones; /* [length][(words+1)/2], for leaf_words() */
     uint64_t *keys, *multiplicities;
     size_t count, room; /* results in the batch, and how many it holds */
     slip_status status;
@@ -84,75 +86,74 @@ static void leaf_nibbles(struct stream *s, const struct node *node, const uint8_
     }
 }
 
-/* A one in the byte of this position, as part of its word. */
+/* A one in the byte of this position, as part of its word in memory. */
 static inline uint64_t byte_unit(uint32_t position)
 {
-    union {
-        unsigned char bytes[8];
-        uint64_t word;
-    } unit = {{0}};
-    unit.bytes[position % 8] = 1;
-    return unit.word;
+    unsigned byte = position % 8;
+    return (uint64_t)1 << 8 * (__BYTE_ORDER__ == __ORDER_BIG_ENDIAN__ ? 7 - byte : byte);
 }
 
 /*
- * Likewise in bytes, over several words: ones[v] has a one in the byte of the element of value v,
- * over all words of a key. `words` is a constant where it is small.
+ * Likewise in bytes, over several words, two of them at a time: ones[v] has a one in the byte of
+ * the element of value v, over all words of a key. `twos` is a constant where it is small. The
+ * last result's last store may go one word beyond it.
  */
 static inline __attribute__((always_inline)) void
-leaf_words(struct stream *s, const struct node *node, const uint8_t *row, uint32_t words)
+leaf_words(struct stream *s, const struct node *node, const uint8_t *row, uint32_t twos)
 {
-    uint32_t size = node->size, own = node->gap + node->count;
+    uint32_t size = node->size, own = node->gap + node->count, words = s->words;
     union {
         unsigned char bytes[SLIP_PACKED_LONGEST + 1];
-        uint64_t words[(SLIP_PACKED_LONGEST + 1) / 8];
-    } base = {{0}}; /* the key with the point in slot 0 */
-    memset(s->ones, 0, s->length * words * sizeof *s->ones);
+        two_words twos[(SLIP_PACKED_LONGEST + 1) / 16];
+    } base; /* the key with the point in slot 0 */
+    for (uint32_t j = 0; j < twos; j++)
+        base.twos[j] = (two_words){0};
+    memset(s->ones, 0, s->length * twos * sizeof *s->ones);
     for (uint32_t position = 0; position < size; position++) {
         uint32_t now = position + (position >= own);
         base.bytes[now] = (unsigned char)(row[position] + 2);
-        s->ones[row[position] * words + now / 8] = byte_unit(now);
+        s->ones[row[position] * twos + now / 16][now / 8 % 2] = byte_unit(now);
     }
     base.bytes[own] = 1;
     for (unsigned gap = node->gap; gap <= s->worker->problem->n; gap++, own++) {
-        uint64_t key[(SLIP_PACKED_LONGEST + 1) / 8], unit[(SLIP_PACKED_LONGEST + 1) / 8];
-        for (uint32_t j = 0; j < words; j++) {
-            key[j] = base.words[j];
-            unit[j] = j == own / 8 ? byte_unit(own) : 0;
+        two_words key[(SLIP_PACKED_LONGEST + 1) / 16], unit[(SLIP_PACKED_LONGEST + 1) / 16];
+        for (uint32_t j = 0; j < twos; j++) {
+            key[j] = base.twos[j];
+            unit[j] = (two_words){j == own / 16 && own / 8 % 2 == 0 ? byte_unit(own) : 0,
+                                  j == own / 16 && own / 8 % 2 == 1 ? byte_unit(own) : 0};
         }
         if (s->count + s->length > s->room)
             flush(s);
         if (s->complements)
             write_multiplicities(s, node, gap, s->count);
         uint64_t *out = s->keys + s->count * words;
-        const uint64_t *ones = s->ones;
+        const two_words *ones = s->ones;
         struct mask forbidden = node->forbidden[gap];
-        for (unsigned slot = 0; slot <= size; slot++, ones += words) {
-            for (uint32_t j = 0; j < words; j++)
-                out[j] = key[j];
+        for (unsigned slot = 0; slot <= size; slot++, ones += twos) {
+            for (uint32_t j = 0; j < twos; j++)
+                memcpy(out + 2 * j, &key[j], sizeof key[j]);
             out += mask_has(&forbidden, slot) ? 0 : words;
-            for (uint32_t j = 0; j < words; j++)
+            for (uint32_t j = 0; j < twos; j++)
                 key[j] += unit[j] - ones[j];
         }
-        s->count = (size_t)(out - s->keys) / words;
+        s->count += size + 1 - mask_size(forbidden);
         if (own == size)
             break;
         /* The element behind the gap comes to stand before it. */
+        two_words *passed = &s->ones[row[own] * twos];
         base.bytes[own] = base.bytes[own + 1];
         base.bytes[own + 1] = 1;
-        s->ones[row[own] * words + (own + 1) / 8] = 0;
-        s->ones[row[own] * words + own / 8] = byte_unit(own);
+        passed[(own + 1) / 16][(own + 1) / 8 % 2] = 0;
+        passed[own / 16][own / 8 % 2] = byte_unit(own);
     }
 }
 
 static void leaf_bytes(struct stream *s, const struct node *node, const uint8_t *row)
 {
-    if (s->words == 3)
-        leaf_words(s, node, row, 3);
-    else if (s->words == 4)
-        leaf_words(s, node, row, 4);
+    if (s->words <= 4)
+        leaf_words(s, node, row, 2);
     else
-        leaf_words(s, node, row, s->words);
+        leaf_words(s, node, row, (s->words + 1) / 2);
 }
 
 static void leaf(struct stream *s, const struct node *node)
@@ -241,9 +242,9 @@ static slip_status kernel_visit(worker *w, const struct slip_canonical_sink *sin
     s.words = slip_packed_words(s.length);
     s.room = BATCH_WORDS / s.words + s.length + 1;
     s.rows = malloc(((size_t)q->r + 1) * s.length + 1);
-    s.keys = malloc(s.room * s.words * sizeof *s.keys);
+    s.keys = malloc((s.room * s.words + 1) * sizeof *s.keys);
     s.multiplicities = malloc(s.room * sizeof *s.multiplicities);
-    s.ones = malloc(((size_t)s.length + 1) * s.words * sizeof *s.ones);
+    s.ones = malloc(((size_t)s.length + 1) * ((s.words + 1) / 2) * sizeof *s.ones);
     w->err = err;
     if (!s.rows || !s.keys || !s.multiplicities || !s.ones)
         s.status = slip_fail_memory(err, s.room * s.words * sizeof *s.keys);
