@@ -36,16 +36,18 @@ void slip_pair_case(struct slip_case *c, const struct slip_placement *a,
 void slip_pair_class(struct slip_case *least, const struct slip_placement *a,
                      const struct slip_placement *b, uint32_t n)
 {
+    struct slip_case image, best;
+    slip_pair_case(&best, a, b);
     for (unsigned s = 0; s < SLIP_SYMMETRIES; s++) {
         struct slip_placement a_image, b_image;
-        struct slip_case image;
         slip_placement_image(&a_image, a, n, s);
         slip_placement_image(&b_image, b, n, s);
         slip_pair_case(&image, &a_image, &b_image);
-        if (s == 0 || slip_case_compare(&image, least) < 0)
-            *least = image;
+        if (slip_case_compare(&image, &best) < 0)
+            best = image;
         slip_pair_case(&image, &b_image, &a_image);
-        if (slip_case_compare(&image, least) < 0)
-            *least = image;
+        if (slip_case_compare(&image, &best) < 0)
+            best = image;
     }
+    *least = best;
 }

@@ -7,8 +7,9 @@
 static bool is_about(const struct slip_table_row *row, const struct slip_subcase *subcase)
 {
     for (uint32_t i = 0; i <= 2 * row->name.r; i++)
-        if ((row->column_residue[i] >= 0 && row->column_residue[i] != subcase->column_residue[i]) ||
-            (row->row_residue[i] >= 0 && row->row_residue[i] != subcase->row_residue[i]))
+        if ((row->column_residue[i] >= 0 &&
+             (uint8_t)row->column_residue[i] != subcase->column_residue[i]) ||
+            (row->row_residue[i] >= 0 && (uint8_t)row->row_residue[i] != subcase->row_residue[i]))
             return false;
     return true;
 }

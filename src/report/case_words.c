@@ -92,7 +92,7 @@ static void moves(struct slip_text *text, int d, const char *more, const char *l
 void slip_case_why(struct slip_text *text, const struct slip_derivation *derivation,
                    uint32_t column, uint32_t row)
 {
-    int dx = derivation->dx[column], dy = derivation->dy[row];
+    int8_t dx = derivation->dx[column], dy = derivation->dy[row];
     switch (derivation->region[column][row]) {
     case SLIP_REGION_FREE:
         slip_text_string(text, "A and B put an element here at the same place");

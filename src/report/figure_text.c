@@ -51,7 +51,7 @@ enum { WORD = 24 };
 
 static void region_word(char word[WORD], const struct slip_figure *figure, uint32_t i, uint32_t j)
 {
-    int dx = figure->columns.d[i], dy = figure->rows.d[j];
+    int8_t dx = figure->columns.d[i], dy = figure->rows.d[j];
     switch (figure->region[i][j]) {
     case SLIP_REGION_FREE:
         snprintf(word, WORD, "free");
